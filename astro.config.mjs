@@ -1,0 +1,37 @@
+import node from "@astrojs/node";
+import react from "@astrojs/react";
+import tailwindcss from "@tailwindcss/vite";
+import { defineConfig, passthroughImageService } from "astro/config";
+
+export default defineConfig({
+  output: "server",
+  adapter: node({ mode: "standalone" }),
+  integrations: [react()],
+  image: { service: passthroughImageService() },
+  // Origins are compared with APP_ORIGIN in src/middleware.ts, for JSON and bodiless requests too,
+  // which Astro's own check lets through.
+  security: { checkOrigin: false },
+  experimental: {
+    csp: {
+      directives: [
+        "default-src 'none'",
+        "img-src 'self' blob: data:",
+        "font-src 'self'",
+        "connect-src 'self'",
+        "worker-src 'self' blob:",
+        "manifest-src 'self'",
+        "form-action 'self'",
+        "base-uri 'none'",
+        "frame-ancestors 'none'",
+      ],
+      scriptDirective: { resources: ["'self'", "'wasm-unsafe-eval'"] },
+      styleDirective: { resources: ["'self'"] },
+    },
+  },
+  devToolbar: { enabled: false },
+  vite: {
+    plugins: [tailwindcss()],
+    build: { assetsInlineLimit: 0 },
+    worker: { format: "es" },
+  },
+});

@@ -1,0 +1,73 @@
+import type { Role } from "./roles";
+
+/** Where an action takes place; an object outside the principal's organisation or sites does not exist for them. */
+export type ScopeKind = "open" | "account" | "organisation" | "site" | "plan";
+
+interface Permission {
+  scope: ScopeKind;
+  /** Roles that may; `"anyone"` needs no sign-in, `"member"` any signed-in person. */
+  allow: readonly Role[] | "anyone" | "member";
+}
+
+const everyRole = ["planner", "auditor", "installer", "admin"] as const;
+const office = ["planner", "auditor", "admin"] as const;
+
+/** The one table of who may do what: the server's guard, the pages' middleware and the interface all read it. */
+export const permissions = {
+  "front.read": { scope: "open", allow: "anyone" },
+  "health.read": { scope: "open", allow: "anyone" },
+  "session.start": { scope: "open", allow: "anyone" },
+  "session.end": { scope: "open", allow: "anyone" },
+  "account.read": { scope: "account", allow: "member" },
+  "account.sign-out-everywhere": { scope: "account", allow: "member" },
+  "desk.read": { scope: "organisation", allow: everyRole },
+  "catalogue.read": { scope: "organisation", allow: everyRole },
+  "screening.run-stateless": { scope: "organisation", allow: everyRole },
+  "organisation.read": { scope: "organisation", allow: ["admin"] },
+  "member.change-roles": { scope: "organisation", allow: ["admin"] },
+  "activity.read": { scope: "organisation", allow: ["admin", "auditor"] },
+  "delivery.read": { scope: "organisation", allow: ["admin"] },
+  "site.create": { scope: "organisation", allow: ["planner", "admin"] },
+  "site.read": { scope: "site", allow: everyRole },
+  "site.edit": { scope: "site", allow: ["planner", "admin"] },
+  "plan.create": { scope: "site", allow: ["planner"] },
+  "plan.read": { scope: "plan", allow: office },
+  "plan.edit": { scope: "plan", allow: ["planner"] },
+  "drawing.read": { scope: "plan", allow: office },
+  "drawing.upload": { scope: "plan", allow: ["planner"] },
+  "screening.read": { scope: "plan", allow: office },
+  "screening.run": { scope: "plan", allow: ["planner", "auditor"] },
+  "notice.read": { scope: "plan", allow: office },
+  "notice.issue": { scope: "plan", allow: ["planner"] },
+} as const satisfies Record<string, Permission>;
+
+export type Action = keyof typeof permissions;
+
+/** A signed-in person as the guard sees them. `siteIds` limits whoever holds no role but installer. */
+export interface Member {
+  kind: "member";
+  userId: string;
+  organisationId: string;
+  name: string;
+  roles: readonly Role[];
+  siteIds: readonly string[];
+}
+
+export interface Anonymous {
+  kind: "anonymous";
+}
+
+export type Principal = Member | Anonymous;
+
+/** Whether the roles of `principal` allow `action` at all, wherever it takes place. */
+export function mayAct(principal: Principal, action: Action): boolean {
+  const { allow }: Permission = permissions[action];
+  if (allow === "anyone") return true;
+  if (principal.kind !== "member") return false;
+  return allow === "member" || principal.roles.some((role) => allow.includes(role));
+}
+
+/** Whether `principal` can see the site at all: installers see the sites they are assigned to. */
+export function maySeeSite(member: Member, siteId: string): boolean {
+  return member.roles.some((role) => role !== "installer") || member.siteIds.includes(siteId);
+}

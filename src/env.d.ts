@@ -1,0 +1,15 @@
+/// <reference types="astro/client" />
+
+declare namespace App {
+  interface Locals {
+    /** Short random id that stands in the log line and in the answer's X-Request-Id. */
+    requestId: string;
+    principal: import("~/domain/permissions").Principal;
+    /** Hash of the session token, null without a session. */
+    sessionId: string | null;
+    /** When the person last proved who they are; null without a session. */
+    authenticatedAt: Date | null;
+    /** What the path's parameters name, once the guard has found them. */
+    scope: import("~/server/auth/scope").Scope;
+  }
+}

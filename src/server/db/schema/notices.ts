@@ -1,0 +1,76 @@
+import { foreignKey, index, int, mysqlTable, unique, varchar } from "drizzle-orm/mysql-core";
+import type { DeliveryState } from "~/domain/delivery";
+import type { NoticeKind, NoticeState } from "~/domain/notice";
+import { code, exactText, id, instant, label } from "../columns";
+import { organisations, users } from "./people";
+import { screenings } from "./plans";
+
+/** What a site's people are told after a screening. Versions of one screening's notice count up from 1. */
+export const notices = mysqlTable(
+  "notices",
+  {
+    id: id("id").primaryKey(),
+    organisationId: id("organisation_id").notNull(),
+    screeningId: id("screening_id").notNull(),
+    kind: code("kind", { length: 16 }).$type<NoticeKind>().notNull(),
+    version: int("version").notNull(),
+    state: code("state", { length: 16 }).$type<NoticeState>().notNull(),
+    /** Plain text of the planner. */
+    coveringText: exactText("covering_text").notNull(),
+    createdBy: id("created_by").references(() => users.id),
+    createdAt: instant("created_at").notNull(),
+    issuedAt: instant("issued_at"),
+  },
+  (t) => [
+    unique("notices_version").on(t.screeningId, t.kind, t.version),
+    foreignKey({
+      name: "notices_screening",
+      columns: [t.organisationId, t.screeningId],
+      foreignColumns: [screenings.organisationId, screenings.id],
+    }),
+  ],
+);
+
+/** Who a notice goes to, as they stood in the site's list when it was composed. */
+export const noticeRecipients = mysqlTable(
+  "notice_recipients",
+  {
+    id: id("id").primaryKey(),
+    noticeId: id("notice_id")
+      .notNull()
+      .references(() => notices.id, { onDelete: "cascade" }),
+    name: label("name").notNull(),
+    email: varchar("email", { length: 254 }).notNull(),
+  },
+  (t) => [unique("notice_recipients_email").on(t.noticeId, t.email)],
+);
+
+/**
+ * The outbox: one row for each message, written in the transaction of what it tells of and claimed by the delivery
+ * worker. A notice's message names its recipient; a sign-in message names the person, and its token is made when it is sent.
+ */
+export const deliveries = mysqlTable(
+  "deliveries",
+  {
+    id: id("id").primaryKey(),
+    organisationId: id("organisation_id")
+      .notNull()
+      .references(() => organisations.id),
+    kind: code("kind", { length: 16 }).$type<"notice" | "sign-in-link">().notNull(),
+    recipientId: id("recipient_id")
+      .unique()
+      .references(() => noticeRecipients.id, { onDelete: "cascade" }),
+    userId: id("user_id").references(() => users.id, { onDelete: "cascade" }),
+    messageId: code("message_id", { length: 128 }).notNull().unique(),
+    state: code("state", { length: 16 }).$type<DeliveryState>().notNull(),
+    attempts: int("attempts").notNull(),
+    nextAttemptAt: instant("next_attempt_at").notNull(),
+    /** Until when the worker that claimed the row may be at work on it. */
+    claimedUntil: instant("claimed_until"),
+    /** The mail server's last answer, without addresses. */
+    lastAnswer: varchar("last_answer", { length: 500 }),
+    createdAt: instant("created_at").notNull(),
+    sentAt: instant("sent_at"),
+  },
+  (t) => [index("deliveries_due").on(t.state, t.nextAttemptAt), index("deliveries_organisation").on(t.organisationId, t.createdAt)],
+);

@@ -1,0 +1,145 @@
+import { foreignKey, index, int, mysqlTable, primaryKey, unique, varchar } from "drizzle-orm/mysql-core";
+import type { Role } from "~/domain/roles";
+import { code, exactText, id, instant, label, sha256Hex } from "../columns";
+
+export const organisations = mysqlTable("organisations", {
+  id: id("id").primaryKey(),
+  slug: code("slug", { length: 64 }).notNull().unique(),
+  name: label("name").notNull(),
+  createdAt: instant("created_at").notNull(),
+});
+
+export const users = mysqlTable(
+  "users",
+  {
+    id: id("id").primaryKey(),
+    organisationId: id("organisation_id")
+      .notNull()
+      .references(() => organisations.id),
+    name: label("name").notNull(),
+    /** Where mail for this person goes; never an identity. Lower case. */
+    email: varchar("email", { length: 254 }).notNull(),
+    createdAt: instant("created_at").notNull(),
+  },
+  (t) => [
+    unique("users_email").on(t.organisationId, t.email),
+    unique("users_in_organisation").on(t.organisationId, t.id),
+  ],
+);
+
+/** Who a sign-in provider says somebody is: (organisation, issuer, subject). */
+export const identities = mysqlTable(
+  "identities",
+  {
+    organisationId: id("organisation_id").notNull(),
+    issuer: code("issuer", { length: 255 }).notNull(),
+    subject: code("subject", { length: 255 }).notNull(),
+    userId: id("user_id").notNull(),
+    createdAt: instant("created_at").notNull(),
+  },
+  (t) => [
+    primaryKey({ columns: [t.organisationId, t.issuer, t.subject] }),
+    foreignKey({
+      name: "identities_user",
+      columns: [t.organisationId, t.userId],
+      foreignColumns: [users.organisationId, users.id],
+    }).onDelete("cascade"),
+  ],
+);
+
+export const memberships = mysqlTable(
+  "memberships",
+  {
+    organisationId: id("organisation_id").notNull(),
+    userId: id("user_id").notNull(),
+    role: code("role", { length: 16 }).$type<Role>().notNull(),
+    grantedAt: instant("granted_at").notNull(),
+  },
+  (t) => [
+    primaryKey({ columns: [t.userId, t.role] }),
+    foreignKey({
+      name: "memberships_user",
+      columns: [t.organisationId, t.userId],
+      foreignColumns: [users.organisationId, users.id],
+    }).onDelete("cascade"),
+  ],
+);
+
+/** A signed-in browser. The id is the hash of the token that the cookie holds. */
+export const sessions = mysqlTable(
+  "sessions",
+  {
+    id: sha256Hex("id").primaryKey(),
+    userId: id("user_id")
+      .notNull()
+      .references(() => users.id, { onDelete: "cascade" }),
+    createdAt: instant("created_at").notNull(),
+    lastSeenAt: instant("last_seen_at").notNull(),
+    expiresAt: instant("expires_at").notNull(),
+    /** When the person last proved who they are. */
+    authenticatedAt: instant("authenticated_at").notNull(),
+  },
+  (t) => [index("sessions_user").on(t.userId), index("sessions_expiry").on(t.expiresAt)],
+);
+
+/** A sign-in on its way to the provider and back, bound to a cookie whose hash is the id. */
+export const pendingSignIns = mysqlTable(
+  "pending_sign_ins",
+  {
+    id: sha256Hex("id").primaryKey(),
+    organisationId: id("organisation_id").references(() => organisations.id, { onDelete: "cascade" }),
+    state: code("state", { length: 128 }).notNull(),
+    nonce: code("nonce", { length: 128 }).notNull(),
+    codeVerifier: code("code_verifier", { length: 128 }).notNull(),
+    returnTo: varchar("return_to", { length: 512 }).notNull(),
+    expiresAt: instant("expires_at").notNull(),
+  },
+  (t) => [index("pending_sign_ins_expiry").on(t.expiresAt)],
+);
+
+/** One-time sign-in links sent by e-mail, kept as hashes. */
+export const signInLinks = mysqlTable(
+  "sign_in_links",
+  {
+    id: sha256Hex("id").primaryKey(),
+    userId: id("user_id")
+      .notNull()
+      .references(() => users.id, { onDelete: "cascade" }),
+    createdAt: instant("created_at").notNull(),
+    expiresAt: instant("expires_at").notNull(),
+    usedAt: instant("used_at"),
+  },
+  (t) => [index("sign_in_links_expiry").on(t.expiresAt)],
+);
+
+/** Attempts counted in a window, shared by all processes. The key holds a hash where it would hold an address. */
+export const rateLimits = mysqlTable(
+  "rate_limits",
+  {
+    bucket: code("bucket", { length: 128 }).notNull(),
+    windowStartedAt: instant("window_started_at").notNull(),
+    attempts: int("attempts").notNull(),
+  },
+  (t) => [primaryKey({ columns: [t.bucket, t.windowStartedAt] }), index("rate_limits_window").on(t.windowStartedAt)],
+);
+
+/** Who did what, when. Append-only: the application's database user may not change or remove a row. */
+export const activityLog = mysqlTable(
+  "activity_log",
+  {
+    id: id("id").primaryKey(),
+    organisationId: id("organisation_id")
+      .notNull()
+      .references(() => organisations.id),
+    at: instant("at").notNull(),
+    /** Null when the service itself acted. No foreign key: the log outlives people. */
+    actorId: id("actor_id"),
+    event: code("event", { length: 64 }).notNull(),
+    subjectKind: code("subject_kind", { length: 32 }).notNull(),
+    subjectId: id("subject_id"),
+    /** JSON of what changed. */
+    detail: exactText("detail").notNull(),
+  },
+  (t) => [index("activity_log_time").on(t.organisationId, t.at)],
+);
+
