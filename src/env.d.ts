@@ -11,5 +11,7 @@ declare namespace App {
     authenticatedAt: Date | null;
     /** What the path's parameters name, once the guard has found them. */
     scope: import("~/server/auth/scope").Scope;
+    /** Why the page could not be shown; the error pages say it. */
+    refusal?: import("~/domain/errors").Refusal;
   }
 }

@@ -58,7 +58,12 @@ export class Refusal extends Error {
 
 /** The body of every refused API call. */
 export interface ErrorBody {
-  error: { code: ErrorCode; message: string; faults?: readonly Fault[]; detail?: Readonly<Record<string, unknown>> };
+  error: {
+    code: ErrorCode;
+    message: string;
+    faults?: readonly Fault[];
+    detail?: Readonly<Record<string, unknown>>;
+  };
 }
 
 export const errorBody = (refusal: Refusal): ErrorBody => ({

@@ -33,7 +33,8 @@ const environmentSchema = z
         context.addIssue({
           code: "custom",
           path: [key],
-          message: "with LOCAL_FAKES every address must be a loopback address; real services and fakes do not mix",
+          message:
+            "with LOCAL_FAKES every address must be a loopback address; real services and fakes do not mix",
         });
   })
   .transform((value) => ({
@@ -51,7 +52,11 @@ const environmentSchema = z
     },
     smtpUrl: value.SMTP_URL,
     mailFrom: value.MAIL_FROM,
-    oidc: { issuer: value.OIDC_ISSUER, clientId: value.OIDC_CLIENT_ID, clientSecret: value.OIDC_CLIENT_SECRET },
+    oidc: {
+      issuer: value.OIDC_ISSUER,
+      clientId: value.OIDC_CLIENT_ID,
+      clientSecret: value.OIDC_CLIENT_SECRET,
+    },
     logLevel: value.LOG_LEVEL,
     localFakes: value.LOCAL_FAKES,
     trustProxy: value.TRUST_PROXY,
@@ -67,7 +72,9 @@ export function parseEnvironment(variables: Record<string, string | undefined>):
   const parsed = environmentSchema.safeParse(variables);
   if (parsed.success) return parsed.data;
   const lines = parsed.error.issues.map((issue) => `  ${issue.path.join(".")}: ${issue.message}`);
-  throw new Error(`The environment is not complete:\n${lines.join("\n")}\nREADME.md, "Configuration", lists every variable.`);
+  throw new Error(
+    `The environment is not complete:\n${lines.join("\n")}\nREADME.md, "Configuration", lists every variable.`,
+  );
 }
 
 let parsedOnce: Environment | undefined;

@@ -30,7 +30,9 @@ export function db(): Database {
     pool = createPool(poolOptions(env().databaseUrl));
     // An error event without a listener would end the process; the query that meets it fails by itself.
     pool.pool.on("connection", (connection) => {
-      connection.on("error", (error: Error) => log().warn({ error: error.message }, "database connection lost"));
+      connection.on("error", (error: Error) =>
+        log().warn({ error: error.message }, "database connection lost"),
+      );
     });
     database = drizzle(pool);
   }

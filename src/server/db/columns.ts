@@ -1,7 +1,9 @@
 import { customType, datetime, varchar } from "drizzle-orm/mysql-core";
 
 /** A UUID made by the application: MariaDB does not hand back ids that it made itself. */
-export const id = customType<{ data: string }>({ dataType: () => "char(36) character set ascii collate ascii_bin" });
+export const id = customType<{ data: string }>({
+  dataType: () => "char(36) character set ascii collate ascii_bin",
+});
 
 /** A SHA-256 in lower-case hexadecimal. */
 export const sha256Hex = customType<{ data: string }>({

@@ -72,5 +72,8 @@ export const deliveries = mysqlTable(
     createdAt: instant("created_at").notNull(),
     sentAt: instant("sent_at"),
   },
-  (t) => [index("deliveries_due").on(t.state, t.nextAttemptAt), index("deliveries_organisation").on(t.organisationId, t.createdAt)],
+  (t) => [
+    index("deliveries_due").on(t.state, t.nextAttemptAt),
+    index("deliveries_organisation").on(t.organisationId, t.createdAt),
+  ],
 );

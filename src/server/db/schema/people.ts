@@ -120,7 +120,10 @@ export const rateLimits = mysqlTable(
     windowStartedAt: instant("window_started_at").notNull(),
     attempts: int("attempts").notNull(),
   },
-  (t) => [primaryKey({ columns: [t.bucket, t.windowStartedAt] }), index("rate_limits_window").on(t.windowStartedAt)],
+  (t) => [
+    primaryKey({ columns: [t.bucket, t.windowStartedAt] }),
+    index("rate_limits_window").on(t.windowStartedAt),
+  ],
 );
 
 /** Who did what, when. Append-only: the application's database user may not change or remove a row. */
@@ -142,4 +145,3 @@ export const activityLog = mysqlTable(
   },
   (t) => [index("activity_log_time").on(t.organisationId, t.at)],
 );
-

@@ -1,4 +1,13 @@
-import { double, foreignKey, index, int, mysqlTable, primaryKey, unique, varchar } from "drizzle-orm/mysql-core";
+import {
+  double,
+  foreignKey,
+  index,
+  int,
+  mysqlTable,
+  primaryKey,
+  unique,
+  varchar,
+} from "drizzle-orm/mysql-core";
 import type { Verdict } from "~/domain/screening-result";
 import { code, exactText, id, instant, label, sha256Hex } from "../columns";
 import { organisations, users } from "./people";

@@ -1,0 +1,71 @@
+import { z } from "zod";
+import { Refusal } from "~/domain/errors";
+import { maySeeSite, type Member } from "~/domain/permissions";
+import { db } from "../db/client";
+import { findDrawing } from "../db/queries/drawings";
+import { findNotice } from "../db/queries/notices";
+import { findPlan } from "../db/queries/plans";
+import { findScreening } from "../db/queries/screenings";
+import { findContact, findSite } from "../db/queries/sites";
+
+type Found<F extends (...args: never[]) => Promise<unknown>> = NonNullable<Awaited<ReturnType<F>>>;
+
+/** The rows that a path's parameters name. */
+export interface Scope {
+  site?: Found<typeof findSite>;
+  plan?: Found<typeof findPlan>;
+  contact?: Found<typeof findContact>;
+  drawing?: Found<typeof findDrawing>;
+  screening?: Found<typeof findScreening>;
+  notice?: Found<typeof findNotice>;
+}
+
+const uuid = z.uuid();
+
+const notThere = () =>
+  new Refusal(
+    "not-found",
+    "There is nothing at this address, or it is not yours to see. Go back to your Desk.",
+  );
+
+function found<T>(row: T | undefined): T {
+  if (row === undefined) throw notThere();
+  return row;
+}
+
+/**
+ * Finds what a path names, from the outside in: a child under the wrong parent, another organisation's object, another
+ * site's object and a malformed id are all the same to the caller.
+ * @throws Refusal not-found
+ */
+export async function resolveScope(member: Member, params: Partial<Record<string, string>>): Promise<Scope> {
+  const scope: Scope = {};
+  const organisationId = member.organisationId;
+  const id = (name: string): string => {
+    const parsed = uuid.safeParse(params[name]);
+    if (!parsed.success) throw notThere();
+    return parsed.data;
+  };
+  if (params["siteId"] !== undefined) scope.site = found(await findSite(db(), organisationId, id("siteId")));
+  if (params["planId"] !== undefined) {
+    scope.plan = found(await findPlan(db(), organisationId, id("planId")));
+    scope.site = found(await findSite(db(), organisationId, scope.plan.siteId));
+  }
+  if (scope.site && !maySeeSite(member, scope.site.id)) throw notThere();
+  if (scope.site && params["contactId"] !== undefined)
+    scope.contact = found(await findContact(db(), organisationId, scope.site.id, id("contactId")));
+  if (scope.plan && params["drawingId"] !== undefined)
+    scope.drawing = found(await findDrawing(db(), organisationId, scope.plan.id, id("drawingId")));
+  if (scope.plan && params["screeningId"] !== undefined)
+    scope.screening = found(await findScreening(db(), organisationId, scope.plan.id, id("screeningId")));
+  if (scope.plan && params["noticeId"] !== undefined)
+    scope.notice = found(await findNotice(db(), organisationId, scope.plan.id, id("noticeId")));
+  return scope;
+}
+
+/** The part of a scope that a path must have named. @throws Error where an endpoint asks for what its path has not. */
+export function named<K extends keyof Scope>(scope: Scope, key: K): NonNullable<Scope[K]> {
+  const row = scope[key];
+  if (row === undefined) throw new Error(`This address names no ${key}.`);
+  return row;
+}

@@ -1,0 +1,110 @@
+import type { APIContext, APIRoute } from "astro";
+import { z } from "zod";
+import { Refusal } from "~/domain/errors";
+import type { Action, Member, Principal, permissions } from "~/domain/permissions";
+import { authorise } from "../auth/guard";
+import type { Scope } from "../auth/scope";
+import { log } from "../log";
+import { parseBody } from "./body";
+import { refused } from "./respond";
+
+const jsonMaxBytes = 1_000_000;
+
+type PrincipalFor<A extends Action> = (typeof permissions)[A]["allow"] extends "anyone" ? Principal : Member;
+
+interface Definition<A extends Action, B extends z.ZodType, Q extends z.ZodType> {
+  /** What the caller must be allowed to do; the guard checks it before anything is read. */
+  action: A;
+  /** One sentence for the published API description. */
+  summary: string;
+  body?: B;
+  query?: Q;
+  /** Default 1 MB. */
+  maxBytes?: number;
+  /** True where a page posts a plain HTML form here. */
+  form?: boolean;
+}
+
+export interface Call<A extends Action, B, Q> {
+  principal: PrincipalFor<A>;
+  /** The objects that the path names, all of the principal's organisation and each the child of the one before. */
+  scope: Scope;
+  body: B;
+  query: Q;
+  request: Request;
+  context: APIContext;
+}
+
+export type Endpoint = APIRoute & {
+  definition: {
+    action: Action;
+    summary: string;
+    body?: z.ZodType | undefined;
+    query?: z.ZodType | undefined;
+  };
+};
+
+const nothing = z.undefined();
+
+/**
+ * A door of the API: authorises, parses, calls `handle`, and turns a refusal into its answer.
+ * Everything that is not a `Refusal` is logged by its request id and answered 500 without its text.
+ */
+export function endpoint<
+  A extends Action,
+  B extends z.ZodType = typeof nothing,
+  Q extends z.ZodType = typeof nothing,
+>(
+  definition: Definition<A, B, Q>,
+  handle: (call: Call<A, z.output<B>, z.output<Q>>) => Promise<Response> | Response,
+): Endpoint {
+  const { action, body, query, maxBytes = jsonMaxBytes, form = false } = definition;
+  const route: APIRoute = async (context) => {
+    try {
+      const { principal, scope } = await authorise(context, action);
+      const parsedQuery = (query ?? nothing).safeParse(query && Object.fromEntries(context.url.searchParams));
+      if (!parsedQuery.success)
+        throw new Refusal("input.refused", "The address has a parameter that cannot be used.");
+      const parsedBody = body && (await parseBody(context.request, body, { maxBytes, form }));
+      return await handle({
+        principal: principal as PrincipalFor<A>,
+        scope,
+        body: parsedBody as z.output<B>,
+        query: parsedQuery.data as z.output<Q>,
+        request: context.request,
+        context,
+      });
+    } catch (error) {
+      return refused(asRefusal(error, context));
+    }
+  };
+  return Object.assign(route, { definition: { action, summary: definition.summary, body, query } });
+}
+
+/** The refusal that stands for `error`; one that nobody foresaw is logged and loses its text. */
+export function asRefusal(error: unknown, context: Pick<APIContext, "locals" | "routePattern">): Refusal {
+  if (error instanceof Refusal) return error;
+  const { requestId } = context.locals;
+  log().error({ requestId, route: context.routePattern, ...describe(error) }, "unforeseen error");
+  return new Refusal(
+    "internal",
+    `Something went wrong on our side and nothing was changed. Try again; if it happens again, report the number ${requestId}.`,
+    { detail: { requestId } },
+  );
+}
+
+/** What may be logged of an error: a failed query carries its bound parameters in its message, so only the cause's code is kept. */
+function describe(error: unknown): { error: string; stack?: string | undefined } {
+  if (!(error instanceof Error)) return { error: typeof error };
+  if (error.name === "DrizzleQueryError" || "sql" in error) {
+    const cause = error.cause instanceof Error ? error.cause : error;
+    return { error: "code" in cause ? String(cause.code) : cause.name, stack: stackOnly(error) };
+  }
+  return { error: error.message, stack: stackOnly(error) };
+}
+
+const stackOnly = (error: Error): string | undefined =>
+  error.stack
+    ?.split("\n")
+    .filter((line) => line.startsWith("    at "))
+    .join("\n");
