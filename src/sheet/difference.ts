@@ -21,11 +21,17 @@ export function sameJson(a: Json, b: Json): boolean {
   if (!isRecord(a) || !isRecord(b)) return false;
   const keys = Object.keys(a);
   return (
-    keys.length === Object.keys(b).length && keys.every((key) => Object.hasOwn(b, key) && sameJson(a[key], b[key]))
+    keys.length === Object.keys(b).length &&
+    keys.every((key) => Object.hasOwn(b, key) && sameJson(a[key], b[key]))
   );
 }
 
-function collectArray(before: readonly Json[], after: readonly Json[], at: readonly Key[], into: Change[]): void {
+function collectArray(
+  before: readonly Json[],
+  after: readonly Json[],
+  at: readonly Key[],
+  into: Change[],
+): void {
   if (before.length === after.length) {
     before.forEach((item, index) => collect(item, after[index], [...at, index], into));
     return;
@@ -34,7 +40,8 @@ function collectArray(before: readonly Json[], after: readonly Json[], at: reado
   let head = 0;
   while (head < shorter && sameJson(before[head], after[head])) head++;
   let tail = 0;
-  while (tail < shorter - head && sameJson(before[before.length - 1 - tail], after[after.length - 1 - tail])) tail++;
+  while (tail < shorter - head && sameJson(before[before.length - 1 - tail], after[after.length - 1 - tail]))
+    tail++;
   into.push({
     at,
     index: head,
@@ -57,7 +64,8 @@ function collect(before: Json, after: Json, at: readonly Key[], into: Change[]):
     const had = Object.hasOwn(before, key);
     const has = Object.hasOwn(after, key);
     if (had && has) collect(before[key], after[key], [...at, key], into);
-    else into.push({ at: [...at, key], ...(had && { before: before[key] }), ...(has && { after: after[key] }) });
+    else
+      into.push({ at: [...at, key], ...(had && { before: before[key] }), ...(has && { after: after[key] }) });
   }
 }
 
@@ -81,7 +89,8 @@ function changeAt(value: Json, at: readonly Key[], depth: number, change: (value
 function applyOne(document: Json, change: Change): Json {
   if ("index" in change) {
     return changeAt(document, change.at, 0, (value) => {
-      if (!Array.isArray(value)) throw new Error(`A difference does not fit its document at ${change.at.join(".")}.`);
+      if (!Array.isArray(value))
+        throw new Error(`A difference does not fit its document at ${change.at.join(".")}.`);
       return [
         ...value.slice(0, change.index),
         ...change.added,
@@ -92,7 +101,8 @@ function applyOne(document: Json, change: Change): Json {
   if (Object.hasOwn(change, "after")) return changeAt(document, change.at, 0, () => change.after);
   const key = change.at[change.at.length - 1] as Key;
   return changeAt(document, change.at.slice(0, -1), 0, (value) => {
-    if (!isRecord(value)) throw new Error(`A difference does not fit its document at ${change.at.join(".")}.`);
+    if (!isRecord(value))
+      throw new Error(`A difference does not fit its document at ${change.at.join(".")}.`);
     return Object.fromEntries(Object.entries(value).filter(([name]) => name !== key));
   });
 }

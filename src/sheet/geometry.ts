@@ -20,7 +20,11 @@ export function pathLengthM(path: readonly Point3[]): number {
 }
 
 /** The place on the segment from `a` to `b` that is nearest to `point`; `along` runs from 0 at `a` to 1 at `b`. */
-export function nearestOnSegment(point: Point2, a: Point2, b: Point2): { at: Point2; along: number; distanceM: number } {
+export function nearestOnSegment(
+  point: Point2,
+  a: Point2,
+  b: Point2,
+): { at: Point2; along: number; distanceM: number } {
   const dx = b[0] - a[0];
   const dy = b[1] - a[1];
   const squared = dx * dx + dy * dy;

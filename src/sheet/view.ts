@@ -17,9 +17,15 @@ const scaleRange = { least: 0.05, most: 20_000 } as const;
 
 const clampScale = (scale: number): number => Math.min(scaleRange.most, Math.max(scaleRange.least, scale));
 
-export const toScreen = (view: View, [x, y]: Point2): Point2 => [view.x + x * view.scale, view.y - y * view.scale];
+export const toScreen = (view: View, [x, y]: Point2): Point2 => [
+  view.x + x * view.scale,
+  view.y - y * view.scale,
+];
 
-export const toPlan = (view: View, [x, y]: Point2): Point2 => [(x - view.x) / view.scale, (view.y - y) / view.scale];
+export const toPlan = (view: View, [x, y]: Point2): Point2 => [
+  (x - view.x) / view.scale,
+  (view.y - y) / view.scale,
+];
 
 /** Zooms by `factor` while the plan under `atPx` stays under it. */
 export function zoomAt(view: View, factor: number, atPx: Point2): View {
@@ -39,7 +45,10 @@ export function fitTo(bounds: Bounds, size: SizePx, marginPx = 32): View {
   const widthM = Math.max(bounds.maxX - bounds.minX, 0.5);
   const heightM = Math.max(bounds.maxY - bounds.minY, 0.5);
   const scale = clampScale(
-    Math.min(Math.max(1, size.width - 2 * marginPx) / widthM, Math.max(1, size.height - 2 * marginPx) / heightM),
+    Math.min(
+      Math.max(1, size.width - 2 * marginPx) / widthM,
+      Math.max(1, size.height - 2 * marginPx) / heightM,
+    ),
   );
   return {
     scale,
