@@ -15,6 +15,11 @@ export const code = customType<{ data: string; config: { length: number } }>({
   dataType: (config) => `varchar(${String(config?.length ?? 64)}) character set ascii collate ascii_bin`,
 });
 
+/** An id inside a plan document: the planner's own characters, up to 100 of them, compared byte by byte. */
+export const documentKey = customType<{ data: string }>({
+  dataType: () => "varchar(100) character set utf8mb4 collate utf8mb4_bin",
+});
+
 /** Text that is kept to the byte, such as a plan document's JSON (up to the packet size, 64 MB). */
 export const exactText = customType<{ data: string }>({
   dataType: () => "longtext character set utf8mb4 collate utf8mb4_bin",

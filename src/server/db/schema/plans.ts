@@ -9,7 +9,7 @@ import {
   varchar,
 } from "drizzle-orm/mysql-core";
 import type { Verdict } from "~/domain/screening-result";
-import { code, exactText, id, instant, label, sha256Hex } from "../columns";
+import { code, documentKey, exactText, id, instant, label, sha256Hex } from "../columns";
 import { organisations, users } from "./people";
 
 export const sites = mysqlTable(
@@ -182,9 +182,9 @@ export const findings = mysqlTable(
     screeningId: id("screening_id")
       .notNull()
       .references(() => screenings.id, { onDelete: "cascade" }),
-    sensorId: code("sensor_id", { length: 64 }).notNull(),
-    limitId: code("limit_id", { length: 64 }).notNull(),
-    sensorName: label("sensor_name").notNull(),
+    sensorId: documentKey("sensor_id").notNull(),
+    limitId: documentKey("limit_id").notNull(),
+    sensorName: label("sensor_name", 300).notNull(),
     kind: code("kind", { length: 16 }).notNull(),
     limitValue: double("limit_value").notNull(),
     value: double("value").notNull(),
@@ -192,7 +192,18 @@ export const findings = mysqlTable(
     unit: code("unit", { length: 8 }).notNull(),
     budgetUsed: double("budget_used").notNull(),
     verdict: code("verdict", { length: 16 }).$type<Verdict>().notNull(),
-    loadCaseId: code("load_case_id", { length: 64 }),
+    loadCaseId: documentKey("load_case_id"),
   },
   (t) => [primaryKey({ columns: [t.screeningId, t.sensorId, t.limitId] })],
 );
+
+/** Who is having a document screened without keeping it: one at a time each, over all processes. */
+export const statelessScreenings = mysqlTable("stateless_screenings", {
+  userId: id("user_id")
+    .primaryKey()
+    .references(() => users.id, { onDelete: "cascade" }),
+  /** Names the run that holds the place. */
+  runId: id("run_id").notNull(),
+  /** When the place is free again even if nobody gave it back, because the process ended. */
+  expiresAt: instant("expires_at").notNull(),
+});
