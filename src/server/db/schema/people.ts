@@ -92,6 +92,8 @@ export const pendingSignIns = mysqlTable(
     nonce: code("nonce", { length: 128 }).notNull(),
     codeVerifier: code("code_verifier", { length: 128 }).notNull(),
     returnTo: varchar("return_to", { length: 512 }).notNull(),
+    /** Who the provider vouched for, while that person still has to say for which organisation; null before. */
+    subject: code("subject", { length: 255 }),
     expiresAt: instant("expires_at").notNull(),
   },
   (t) => [index("pending_sign_ins_expiry").on(t.expiresAt)],

@@ -1,0 +1,1 @@
+ALTER TABLE `pending_sign_ins` ADD `subject` varchar(255) character set ascii collate ascii_bin;
