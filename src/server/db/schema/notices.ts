@@ -31,6 +31,21 @@ export const notices = mysqlTable(
   ],
 );
 
+/** What an issued notice says, to the byte: each recipient gets the same, and later changes of names do not reach it. */
+export const noticeMessages = mysqlTable("notice_messages", {
+  noticeId: id("notice_id")
+    .primaryKey()
+    .references(() => notices.id, { onDelete: "cascade" }),
+  subject: label("subject", 300).notNull(),
+  html: exactText("html").notNull(),
+  text: exactText("text").notNull(),
+  /** The positions as CSV, without the byte order mark. */
+  positionsCsv: exactText("positions_csv").notNull(),
+  csvFileName: label("csv_file_name").notNull(),
+  replyToName: label("reply_to_name").notNull(),
+  replyToEmail: varchar("reply_to_email", { length: 254 }).notNull(),
+});
+
 /** Who a notice goes to, as they stood in the site's list when it was composed. */
 export const noticeRecipients = mysqlTable(
   "notice_recipients",
