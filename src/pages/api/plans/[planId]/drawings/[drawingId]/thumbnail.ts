@@ -1,0 +1,8 @@
+import { named } from "~/server/auth/scope";
+import { serveDrawing } from "~/server/drawings/serve";
+import { endpoint } from "~/server/http/endpoint";
+
+export const GET = endpoint(
+  { action: "drawing.read", summary: "A small picture of a drawing." },
+  async ({ scope, request }) => serveDrawing(request, named(scope, "drawing"), "thumbnail"),
+);

@@ -1,0 +1,20 @@
+import { named } from "~/server/auth/scope";
+import { storeDrawing } from "~/server/drawings/drawings";
+import { uploadedFileName } from "~/server/drawings/file-name";
+import { maxUploadBytes } from "~/server/drawings/re-encode";
+import { readBody } from "~/server/http/body";
+import { endpoint } from "~/server/http/endpoint";
+import { json } from "~/server/http/respond";
+
+export const POST = endpoint(
+  {
+    action: "drawing.upload",
+    summary: "Stores a floor plan; the body is the bytes of a PNG, JPEG or WebP image.",
+  },
+  async ({ principal, scope, request }) => {
+    const plan = named(scope, "plan");
+    const bytes = await readBody(request, maxUploadBytes);
+    const fileName = uploadedFileName(request.headers.get("x-file-name"));
+    return json(await storeDrawing(principal, plan, { bytes, fileName }), 201);
+  },
+);

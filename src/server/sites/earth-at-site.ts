@@ -1,0 +1,17 @@
+import type { EarthField } from "~/domain/plan-document/earth-field";
+import type { SiteRow } from "../db/queries/sites";
+
+type Place = Pick<SiteRow, "latitudeDeg" | "longitudeDeg" | "altitudeM" | "timeZone">;
+
+/** The calendar day at the site. */
+function dayAt(timeZone: string, now: Date): string {
+  // The Swedish form of a date is ISO 8601's.
+  return new Intl.DateTimeFormat("sv-SE", { timeZone, dateStyle: "short" }).format(now);
+}
+
+/** The Earth's field of that day by the model; null where nobody has stated where on earth the site is. */
+export function earthFieldAt(site: Place, now: Date): Extract<EarthField, { mode: "model" }> | null {
+  const { latitudeDeg, longitudeDeg, altitudeM, timeZone } = site;
+  if (latitudeDeg === null || longitudeDeg === null) return null;
+  return { mode: "model", latitudeDeg, longitudeDeg, altitudeM: altitudeM ?? 0, date: dayAt(timeZone, now) };
+}
