@@ -1,10 +1,13 @@
 import fc from "fast-check";
 import { describe, expect, it } from "vitest";
+import { parsePlanDocument } from "~/domain/plan-document/parse";
+import { emptyPlanDocument } from "~/domain/plan-document/plan-document";
+import { addScheduledCircuits, knownTags } from "./add-circuits";
 import { findColumns } from "./columns";
-import { conductorRadiusM, touchingSpacingM } from "./conductor";
 import { readSchedule } from "./read-schedule";
 import { decodeText, guessDelimiter, readTable } from "./read-table";
-import { readCores, readLoad, readNumber, readSizeMm2 } from "./values";
+import { readNumber } from "../read-number";
+import { readCores, readLoad, readSizeMm2 } from "./values";
 
 const read = (text: string, knownTags: string[] = []) => {
   const rows = readTable(text, guessDelimiter(text));
@@ -120,14 +123,35 @@ describe("the schedule", () => {
   });
 });
 
-describe("conductors", () => {
-  // IEC 60228 class 2: 35, 70, 95 mm² measure 6.9, 9.8, 11.4 mm across.
-  it.each([
-    [35, 6.9],
-    [70, 9.8],
-    [95, 11.4],
-  ])("%d mm² is %d mm across", (sizeMm2, diameterMm) => {
-    expect(conductorRadiusM(sizeMm2) * 2000).toBeCloseTo(diameterMm, 1);
-    expect(touchingSpacingM(sizeMm2)).toBeGreaterThan(2 * conductorRadiusM(sizeMm2));
+describe("circuits from the schedule", () => {
+  const planned = (text: string) =>
+    addScheduledCircuits(emptyPlanDocument("Hall"), read(text), { twoCoreKind: "dc", frequencyHz: 50 });
+
+  it("wait to be traced, with arrangement by cores, radius by size and supply by load", () => {
+    const document = planned(
+      "Tag;From;To;Cores;Size;Load\nK1;MDB;UPS;3;95;120\nK2;A;B;2;;\nK3;C;D;1;4;9 A AC\nbad;;;x;;",
+    );
+    expect(parsePlanDocument(JSON.parse(JSON.stringify(document)))).toMatchObject({ ok: true });
+    expect(document.circuits).toMatchObject([
+      {
+        name: "K1: MDB to UPS",
+        path: null,
+        route: null,
+        arrangement: { kind: "trefoil" },
+        conductorRadiusM: 0.0057,
+        supply: { kind: "ac3", currentA: 120, frequencyHz: 50 },
+        currentBasis: "load-list",
+      },
+      { name: "K2: A to B", arrangement: { kind: "pair" }, supply: null },
+      { name: "K3: C to D", arrangement: { kind: "single" }, supply: { kind: "ac1", currentA: 9 } },
+    ]);
+    expect(document.drawing.schedule?.map(({ tag, circuitId }) => [tag, circuitId])).toEqual(
+      document.circuits.map(({ id }, i) => [`K${i + 1}`, id]),
+    );
+  });
+
+  it("are known by their tags when the schedule is read again", () => {
+    const document = planned("Tag;Load\nK1;3\nK2;4");
+    expect(knownTags(document)).toEqual(["K1", "K2"]);
   });
 });

@@ -1,17 +1,10 @@
+import { readNumber } from "../read-number";
+
 /** A value read from a cell, or in words why it could not be. */
 export type Read<T> = { ok: true; value: T } | { ok: false; problem: string };
 
 const good = <T>(value: T): Read<T> => ({ ok: true, value });
 const bad = (problem: string): Read<never> => ({ ok: false, problem });
-
-/** A decimal number with point or comma; grouped thousands are accepted only where they can't be mistaken. */
-export function readNumber(text: string): number | null {
-  const tidy = text.replace(/[\s\u00a0\u202f']/g, "");
-  if (/^[+-]?\d{1,3}(\.\d{3})+,\d+$/.test(tidy)) return Number(tidy.replace(/\./g, "").replace(",", "."));
-  if (/^[+-]?\d{1,3}(,\d{3})+\.\d+$/.test(tidy)) return Number(tidy.replace(/,/g, ""));
-  if (/^[+-]?(\d+([.,]\d*)?|[.,]\d+)$/.test(tidy)) return Number(tidy.replace(",", "."));
-  return null;
-}
 
 export interface Cores {
   /** Conductors that carry the load: 1, 2 or 3. */
