@@ -56,7 +56,8 @@ export function addSegmentGradient(
     const lengthB = Math.sqrt(b2);
     const inner = ax * bx + ay * by + az * bz;
     const alongL = ax * lx + ay * ly + az * lz;
-    const beside = alongL >= 0 && alongL <= l2;
+    const pastStart = alongL < 0;
+    const beside = !pastStart && bx * lx + by * ly + bz * lz <= 0;
     const inside = c2 < r2 * l2;
     const a3 = 1 / (a2 * lengthA);
     const b3 = 1 / (b2 * lengthB);
@@ -93,7 +94,7 @@ export function addSegmentGradient(
       fx = -(ofA * ax + ofB * bx);
       fy = -(ofA * ay + ofB * by);
       fz = -(ofA * az + ofB * bz);
-      const nearest2 = alongL < 0 ? a2 : b2;
+      const nearest2 = pastStart ? a2 : b2;
       const q = beside ? c2 / l2 / r2 : nearest2 / r2;
       if (inside && q < 1) {
         const ex = beside ? px : sx;

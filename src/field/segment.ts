@@ -66,7 +66,10 @@ export function addSegmentField(
     let inverse: number;
     if (c2 < radius * radius * l2) {
       if (product === 0) continue;
-      inverse = insideInverse(c2, l2, radius * radius, product, inner, ax * lx + ay * ly + az * lz, a2, b2);
+      const pastStart = ax * lx + ay * ly + az * lz < 0;
+      const pastEnd = bx * lx + by * ly + bz * lz > 0;
+      const overhang2 = pastStart ? a2 : pastEnd ? b2 : -1;
+      inverse = insideInverse(c2, l2, radius * radius, product, inner, overhang2);
     } else {
       inverse = inner < 0 ? (product - inner) / c2 : 1 / (product + inner);
     }
@@ -80,20 +83,18 @@ export function addSegmentField(
   out[at + 2] = (out[at + 2] as number) + sumZ;
 }
 
-/** 1/(|a||b| + a·b) times min(1, (ρ² + e²)/R²) for a point whose distance from the axis is below R; finite on the axis. */
+/**
+ * 1/(|a||b| + a·b) times min(1, (ρ² + e²)/R²) for a point whose distance from the axis is below R; finite on the axis.
+ * `overhang2` is the squared distance to the end that the point lies past, or −1 beside the segment.
+ */
 function insideInverse(
   c2: number,
   l2: number,
   r2: number,
   product: number,
   inner: number,
-  alongL: number,
-  a2: number,
-  b2: number,
+  overhang2: number,
 ): number {
-  if (alongL >= 0 && alongL <= l2) {
-    return inner < 0 ? (product - inner) / (l2 * r2) : c2 / (l2 * r2 * (product + inner));
-  }
-  const nearest2 = alongL < 0 ? a2 : b2;
-  return Math.min(1, nearest2 / r2) / (product + inner);
+  if (overhang2 >= 0) return Math.min(1, overhang2 / r2) / (product + inner);
+  return inner < 0 ? (product - inner) / (l2 * r2) : c2 / (l2 * r2 * (product + inner));
 }
