@@ -4,6 +4,7 @@ import { maySeeSite, type Member } from "~/domain/permissions";
 import { db } from "../db/client";
 import { findDrawing } from "../db/queries/drawings";
 import { findNotice } from "../db/queries/notices";
+import { findMember } from "../db/queries/people";
 import { findPlan } from "../db/queries/plans";
 import { findScreening } from "../db/queries/screenings";
 import { findContact, findSite } from "../db/queries/sites";
@@ -18,6 +19,7 @@ export interface Scope {
   drawing?: Found<typeof findDrawing>;
   screening?: Found<typeof findScreening>;
   notice?: Found<typeof findNotice>;
+  person?: Found<typeof findMember>;
 }
 
 const uuid = z.uuid();
@@ -60,6 +62,8 @@ export async function resolveScope(member: Member, params: Partial<Record<string
     scope.screening = found(await findScreening(db(), organisationId, scope.plan.id, id("screeningId")));
   if (scope.plan && params["noticeId"] !== undefined)
     scope.notice = found(await findNotice(db(), organisationId, scope.plan.id, id("noticeId")));
+  if (params["userId"] !== undefined)
+    scope.person = found(await findMember(db(), organisationId, id("userId")));
   return scope;
 }
 

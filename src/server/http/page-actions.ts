@@ -7,6 +7,7 @@ export const pageActions: Readonly<Record<string, Action>> = {
   "/500": "front.read",
   "/sign-in": "session.start",
   "/sign-in/link": "session.start",
+  "/sign-in/organisation": "session.start",
   "/desk": "desk.read",
   "/catalogue": "catalogue.read",
   "/account": "account.read",

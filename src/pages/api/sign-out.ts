@@ -1,0 +1,13 @@
+import { signOut } from "~/server/auth/account";
+import { endpoint } from "~/server/http/endpoint";
+import { seeOther } from "~/server/http/respond";
+
+export const POST = endpoint(
+  { action: "session.end", summary: "Ends this browser's session." },
+  async ({ principal, context }) => {
+    const { sessionId } = context.locals;
+    if (principal.kind === "member" && sessionId !== null)
+      await signOut(principal, sessionId, context.cookies);
+    return seeOther("/");
+  },
+);

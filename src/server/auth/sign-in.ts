@@ -1,0 +1,48 @@
+import type { AstroCookies } from "astro";
+import type { SignInProblem } from "~/domain/sign-in-problems";
+import { recordActivity } from "../activity/record";
+import { db, type Queryable } from "../db/client";
+import { deleteSession } from "../db/queries/sessions";
+import { readCookie, sessionCookieName } from "./cookies";
+import { purgeExpired } from "./purge";
+import { hashOf } from "./secrets";
+import { createSession, giveSessionCookie } from "./session";
+
+/** Who somebody has proved to be and by what, or why they have not. */
+export type Proof =
+  { userId: string; organisationId: string; by: "provider" | "link" } | { problem: SignInProblem };
+
+/** Where the browser goes next, or why it cannot sign in. */
+export type NextStep = { goTo: string } | { problem: SignInProblem };
+
+/**
+ * Begins a session under a new id for whoever `prove` finds, in one transaction with it; the session that the browser
+ * had before ends.
+ * @returns the problem when there is no proof, otherwise null
+ */
+export async function signIn(
+  cookies: AstroCookies,
+  prove: (tx: Queryable) => Promise<Proof>,
+): Promise<SignInProblem | null> {
+  const before = readCookie(cookies, sessionCookieName());
+  const outcome = await db().transaction(async (tx) => {
+    const proof = await prove(tx);
+    if ("problem" in proof) return proof;
+    const { userId, organisationId, by } = proof;
+    if (before !== null) await deleteSession(tx, hashOf(before));
+    const token = await createSession(tx, userId);
+    await recordActivity(tx, {
+      organisationId,
+      actorId: userId,
+      event: "session.started",
+      subjectKind: "session",
+      subjectId: null,
+      detail: { by },
+    });
+    return { token };
+  });
+  if ("problem" in outcome) return outcome.problem;
+  giveSessionCookie(cookies, outcome.token);
+  await purgeExpired();
+  return null;
+}

@@ -1,0 +1,34 @@
+import type { Role } from "~/domain/roles";
+import type { Queryable } from "../db/client";
+import { assignSites, grantRoles, insertIdentity, insertUser } from "../db/queries/people";
+
+export interface NewMember {
+  organisationId: string;
+  name: string;
+  /** Where mail for them goes; kept in lower case. */
+  email: string;
+  roles: readonly Role[];
+  /** Sites that somebody without an office role may see. */
+  siteIds?: readonly string[];
+  /** Who the sign-in provider says they are; without it they sign in by e-mail links. */
+  identity?: { issuer: string; subject: string };
+}
+
+/** Adds a person to an organisation. @returns their id */
+export async function createMember(tx: Queryable, member: NewMember): Promise<string> {
+  const { organisationId, name, roles, siteIds = [], identity } = member;
+  const userId = crypto.randomUUID();
+  const now = new Date();
+  await insertUser(tx, {
+    id: userId,
+    organisationId,
+    name,
+    email: member.email.trim().toLowerCase(),
+    createdAt: now,
+  });
+  await grantRoles(tx, organisationId, userId, [...new Set(roles)], now);
+  await assignSites(tx, organisationId, userId, siteIds);
+  if (identity !== undefined)
+    await insertIdentity(tx, { organisationId, ...identity, userId, createdAt: now });
+  return userId;
+}
