@@ -1,15 +1,19 @@
 import { fileURLToPath } from "node:url";
 import { defineConfig } from "vitest/config";
 
-const src = fileURLToPath(new URL("./src", import.meta.url));
+const path = (relative: string) => fileURLToPath(new URL(relative, import.meta.url));
 
 export default defineConfig({
-  resolve: { alias: { "~": src } },
+  resolve: { alias: { "~": path("./src") } },
   test: {
     projects: [
       {
         extends: true,
-        test: { name: "unit", include: ["src/**/*.test.ts", "src/**/*.test.tsx", "fakes/**/*.test.ts", "scripts/**/*.test.ts"] },
+        test: {
+          name: "unit",
+          include: ["src/**/*.test.ts", "src/**/*.test.tsx", "fakes/**/*.test.ts", "scripts/**/*.test.ts"],
+          setupFiles: [path("./tests/support/quiet-console.ts")],
+        },
       },
       { extends: true, test: { name: "reference", include: ["tests/reference/**/*.test.ts"] } },
       {
@@ -18,8 +22,31 @@ export default defineConfig({
           name: "api",
           include: ["tests/api/**/*.test.ts"],
           globalSetup: ["tests/api/global-setup.ts"],
+          setupFiles: [path("./tests/support/quiet-console.ts")],
           testTimeout: 30_000,
           hookTimeout: 60_000,
+        },
+      },
+      {
+        extends: true,
+        test: {
+          name: "faults",
+          include: ["tests/faults/**/*.test.ts"],
+          // Each starts the whole application: two at once on two cores would only time out.
+          fileParallelism: false,
+          testTimeout: 120_000,
+          hookTimeout: 120_000,
+        },
+      },
+      {
+        extends: true,
+        test: {
+          name: "e2e",
+          include: ["tests/e2e/**/*.test.ts"],
+          globalSetup: ["tests/e2e/global-setup.ts"],
+          fileParallelism: false,
+          testTimeout: 120_000,
+          hookTimeout: 120_000,
         },
       },
     ],

@@ -6,8 +6,12 @@ export class Visitor {
   /**
    * @param reroute origins that are answered at another address, such as an app under test whose APP_ORIGIN
    *   nobody listens on
+   * @param address what a proxy before the app would say that this browser's address is
    */
-  constructor(private readonly reroute: ReadonlyMap<string, string> = new Map()) {}
+  constructor(
+    private readonly reroute: ReadonlyMap<string, string> = new Map(),
+    private readonly address?: string,
+  ) {}
 
   async request(address: string | URL, init: RequestInit = {}): Promise<Response> {
     const url = new URL(address);
@@ -16,6 +20,7 @@ export class Visitor {
     if (cookie) headers.set("cookie", cookie);
     const unsafe = !["GET", "HEAD", undefined].includes(init.method?.toUpperCase());
     if (unsafe && !headers.has("origin")) headers.set("origin", url.origin);
+    if (this.address && this.reroute.has(url.origin)) headers.set("x-forwarded-for", this.address);
     const target = (this.reroute.get(url.origin) ?? url.origin) + url.pathname + url.search;
     const response = await fetch(target, { ...init, headers, redirect: "manual" });
     this.keepCookies(url, response);

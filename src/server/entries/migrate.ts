@@ -1,0 +1,23 @@
+import { fileURLToPath } from "node:url";
+import { env } from "../env";
+import { applyMigrations } from "./migrations/apply-migrations";
+import { MigrationFailure, exitStatusOf } from "./migrations/migration-failure";
+
+// As built this file is dist/node/migrate.mjs.
+const migrationsFolder = fileURLToPath(new URL("../../drizzle", import.meta.url));
+
+try {
+  const { databaseUrl, migrationDatabaseUrl } = env();
+  if (migrationDatabaseUrl === undefined) {
+    throw new Error("MIGRATION_DATABASE_URL is not set: name a user that may create tables and grant.");
+  }
+  const count = await applyMigrations({
+    ownerUrl: migrationDatabaseUrl,
+    appUrl: databaseUrl,
+    migrationsFolder,
+  });
+  console.log(count === 0 ? "The database is up to date." : `${count} migration(s) applied.`);
+} catch (error) {
+  console.error(error instanceof Error ? error.message : String(error));
+  process.exitCode = error instanceof MigrationFailure ? exitStatusOf[error.kind] : 1;
+}

@@ -1,0 +1,19 @@
+export type MigrationFailureKind = "newer" | "changed" | "locked" | "rights" | "unreachable";
+
+/** Exit statuses of the migrate command; anything else that goes wrong is 1. */
+export const exitStatusOf: Readonly<Record<MigrationFailureKind, number>> = {
+  newer: 4,
+  changed: 5,
+  locked: 6,
+  rights: 7,
+  unreachable: 8,
+};
+
+export class MigrationFailure extends Error {
+  constructor(
+    readonly kind: MigrationFailureKind,
+    message: string,
+  ) {
+    super(message);
+  }
+}
