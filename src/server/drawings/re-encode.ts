@@ -20,9 +20,9 @@ export interface EncodedDrawing {
 
 /** Qualities at which lines of one pixel on a scanned plan stay sharp. */
 const encoders: Record<DrawingFormat, (image: Sharp) => Sharp> = {
-  png: (image) => image.png({ compressionLevel: 8, adaptiveFiltering: true }),
+  png: (image) => image.png({ compressionLevel: 7 }),
   jpeg: (image) => image.jpeg({ quality: 92, chromaSubsampling: "4:4:4", mozjpeg: false }),
-  webp: (image) => image.webp({ nearLossless: true, quality: 60, effort: 3 }),
+  webp: (image) => image.webp({ quality: 92, effort: 2 }),
 };
 
 const options: SharpOptions = { failOn: "error", limitInputPixels: maxPixels, pages: 1, autoOrient: true };
