@@ -1,4 +1,5 @@
 import { randomBytes } from "node:crypto";
+import type { MiddlewareNext } from "astro";
 import { defineMiddleware } from "astro:middleware";
 import { Refusal } from "~/domain/errors";
 import { authorise } from "~/server/auth/guard";
@@ -20,10 +21,21 @@ function checkOrigin(request: Request): void {
   );
 }
 
+/** Astro marks what an endpoint itself has answered 404; without the mark it found no endpoint or no such method. */
+async function answerOfEndpoint(next: MiddlewareNext): Promise<Response> {
+  const response = await next();
+  const isPage = response.headers.get("content-type")?.startsWith("text/html") === true;
+  if (response.status !== 404 || (!isPage && response.headers.has("X-Astro-Reroute"))) return response;
+  await response.body?.cancel();
+  throw new Refusal("not-found", "There is no such endpoint, or it does not take this method.");
+}
+
 export const onRequest = defineMiddleware(async (context, next) => {
   const startedAtMs = performance.now();
   const { locals, request, url, routePattern } = context;
-  // A rewrite to an error page comes through here again with the same locals.
+  // A rewrite to an error page comes through here again with the same locals; it has been judged already, and judging
+  // it once more would refuse the error page for the same reason.
+  if (locals.refusal !== undefined) return next();
   locals.requestId ??= randomBytes(6).toString("hex");
   locals.principal = { kind: "anonymous" };
   locals.sessionId = null;
@@ -35,7 +47,7 @@ export const onRequest = defineMiddleware(async (context, next) => {
     try {
       checkOrigin(request);
       Object.assign(locals, await principalOf(context.cookies));
-      if (isApi) return await next();
+      if (isApi) return await answerOfEndpoint(next);
       const action = pageAction(routePattern);
       if (action === undefined) throw new Error(`No permission is stated for the page ${routePattern}.`);
       await authorise(context, action);
