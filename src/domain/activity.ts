@@ -3,6 +3,7 @@ export const activityEvents = {
   "session.started": "signed in",
   "session.ended": "signed out",
   "session.all-ended": "signed out everywhere",
+  "member.added": "added a member",
   "member.roles-changed": "changed the roles of a member",
   "site.created": "created the site",
   "site.changed": "changed the site",

@@ -1,4 +1,5 @@
 import type { Role } from "~/domain/roles";
+import { recordActivity } from "../activity/record";
 import type { Queryable } from "../db/client";
 import { assignSites, grantRoles, insertIdentity, insertUser } from "../db/queries/people";
 
@@ -30,5 +31,13 @@ export async function createMember(tx: Queryable, member: NewMember): Promise<st
   await assignSites(tx, organisationId, userId, siteIds);
   if (identity !== undefined)
     await insertIdentity(tx, { organisationId, ...identity, userId, createdAt: now });
+  await recordActivity(tx, {
+    organisationId,
+    actorId: null,
+    event: "member.added",
+    subjectKind: "member",
+    subjectId: userId,
+    detail: { roles },
+  });
   return userId;
 }
