@@ -1,0 +1,214 @@
+import type { PlanDocument } from "~/domain/plan-document/plan-document";
+import type { ScreeningResult } from "~/domain/screening-result";
+import { formatBudget } from "~/domain/format";
+import { NeedleMark } from "~/components/ui/NeedleMark";
+import { figureFrame, type FigureFrame, figureLines, type FigureLine, scaleBarM } from "./figure-geometry";
+import { type Position, positionsWorstFirst } from "~/domain/positions";
+import { numberedSources, sourceFinder } from "~/domain/sources";
+
+interface Props {
+  document: PlanDocument;
+  result: ScreeningResult;
+  /** Address of the uploaded image that the document's drawing places. */
+  imageUrl?: string | undefined;
+  label: string;
+}
+
+const markSize = 30;
+
+/** The plan as it was screened: conductors in copper with their numbers, sensors as needle marks. */
+export function PlanFigure({ document, result, imageUrl, label }: Props) {
+  const frame = figureFrame(document);
+  const find = sourceFinder(numberedSources(document));
+  return (
+    <svg
+      role="img"
+      aria-label={label}
+      className="block h-auto w-full min-w-[44rem] text-[13px]"
+      viewBox={`0 0 ${frame.width.toFixed(0)} ${frame.height.toFixed(0)}`}
+    >
+      {imageUrl !== undefined && <SheetImage document={document} frame={frame} url={imageUrl} />}
+      {(document.drawing.zones ?? []).map(({ id, name, outline }) => (
+        <g key={id}>
+          <polygon
+            points={outline.map((point) => frame.place(point).join(",")).join(" ")}
+            className="fill-none stroke-ink"
+            strokeWidth="1.5"
+          />
+          <ZoneName outline={outline} frame={frame} name={name} />
+        </g>
+      ))}
+      {figureLines(document, frame).map((line) => (
+        <Conductors
+          key={line.circuitIds.join()}
+          line={line}
+          keys={line.circuitIds.map((id) => find(id).key)}
+        />
+      ))}
+      {document.equipment.map(({ id, name, centre }) => {
+        const [x, y] = frame.place(centre);
+        return (
+          <g key={id}>
+            <title>{name}</title>
+            <rect
+              x={x - 9}
+              y={y - 9}
+              width="18"
+              height="18"
+              className="fill-paper stroke-copper"
+              strokeWidth="2"
+            />
+            <path
+              d={`M${x - 9} ${y - 9} L${x + 9} ${y + 9} M${x - 9} ${y + 9} L${x + 9} ${y - 9}`}
+              className="stroke-copper"
+            />
+            <Balloon at={[x, y - 22]} text={find(id).key} />
+          </g>
+        );
+      })}
+      {positionsWorstFirst(document, result).map((position) => (
+        <SensorMark key={position.sensor.id} position={position} frame={frame} />
+      ))}
+      <ScaleBar frame={frame} />
+      <NorthArrow frame={frame} northBearingDeg={document.frame.northBearingDeg} />
+    </svg>
+  );
+}
+
+function SheetImage({ document, frame, url }: { document: PlanDocument; frame: FigureFrame; url: string }) {
+  const sheet = document.drawing.sheet;
+  if (sheet === undefined) return null;
+  const [x, y] = frame.place([0, 0]);
+  const [originX, originY] = sheet.originPx;
+  const place = `translate(${x} ${y}) rotate(${-sheet.rotationDeg}) scale(${sheet.metresPerPixel * frame.unitsPerM}) translate(${-originX} ${-originY})`;
+  return (
+    <image
+      href={url}
+      width={sheet.widthPx}
+      height={sheet.heightPx}
+      transform={place}
+      className="opacity-60 dark:invert"
+    />
+  );
+}
+
+function ZoneName({
+  outline,
+  frame,
+  name,
+}: {
+  outline: readonly (readonly number[])[];
+  frame: FigureFrame;
+  name: string;
+}) {
+  const corners = outline.map(frame.place);
+  const x = Math.min(...corners.map(([cx]) => cx));
+  const y = Math.max(...corners.map(([, cy]) => cy));
+  return (
+    <text x={x + 8} y={y - 8} className="fill-muted">
+      {name}
+    </text>
+  );
+}
+
+/** DC: a solid line with a current arrow; AC: a double line; current not known: dashes. */
+function Conductors({ line, keys }: { line: FigureLine; keys: readonly string[] }) {
+  const points = line.points.map((point) => point.join(",")).join(" ");
+  const [x, y] = line.middle;
+  const shared = { points, fill: "none", strokeLinejoin: "round" as const };
+  return (
+    <g>
+      {line.flow === "dc" && <polyline {...shared} className="stroke-copper" strokeWidth="2.5" />}
+      {line.flow === "unknown" && (
+        <polyline {...shared} className="stroke-copper" strokeWidth="2" strokeDasharray="7 5" />
+      )}
+      {line.flow === "ac" && (
+        <>
+          <polyline {...shared} className="stroke-copper" strokeWidth="5.5" />
+          <polyline {...shared} className="stroke-paper" strokeWidth="2.5" />
+        </>
+      )}
+      {line.flow === "dc" && (
+        <path
+          d="M-7 -6 L9 0 L-7 6 Z"
+          transform={`translate(${x} ${y}) rotate(${line.middleAngleDeg}) translate(30 0)`}
+          className="fill-copper"
+        />
+      )}
+      {keys.map((key, index) => (
+        <Balloon key={key} at={along(line, (index - (keys.length - 1) / 2) * 24)} text={key} />
+      ))}
+    </g>
+  );
+}
+
+function along({ middle: [x, y], middleAngleDeg }: FigureLine, distance: number): readonly [number, number] {
+  const angleRad = (middleAngleDeg * Math.PI) / 180;
+  return [x + distance * Math.cos(angleRad), y + distance * Math.sin(angleRad)];
+}
+
+function Balloon({ at: [x, y], text }: { at: readonly [number, number]; text: string }) {
+  return (
+    <g>
+      <circle cx={x} cy={y} r="11" className="fill-paper stroke-copper" strokeWidth="1.25" />
+      <text x={x} y={y + 4.5} textAnchor="middle" className="fill-ink">
+        {text}
+      </text>
+    </g>
+  );
+}
+
+function SensorMark({ position, frame }: { position: Position; frame: FigureFrame }) {
+  const { sensor, verdict, governing } = position;
+  const [x, y] = frame.place(sensor.position);
+  const budgetUsed = governing?.budgetUsed ?? 0;
+  const toLeft = x > frame.width * 0.72;
+  const textX = toLeft ? x - markSize / 2 - 6 : x + markSize / 2 + 6;
+  return (
+    <g>
+      <circle cx={x} cy={y} r={markSize / 2 + 1} className="fill-paper" />
+      <svg x={x - markSize / 2} y={y - markSize / 2} width={markSize} height={markSize}>
+        <NeedleMark budgetUsed={budgetUsed} verdict={verdict} size={markSize} title="" />
+      </svg>
+      <g
+        textAnchor={toLeft ? "end" : "start"}
+        className="fill-ink stroke-paper"
+        strokeWidth="4"
+        strokeLinejoin="round"
+        paintOrder="stroke"
+      >
+        <text x={textX} y={y - 1} fontWeight="600">
+          {sensor.name}
+        </text>
+        <text x={textX} y={y + 15}>
+          {`${formatBudget(budgetUsed)}, ${verdict}`}
+        </text>
+      </g>
+    </g>
+  );
+}
+
+function ScaleBar({ frame }: { frame: FigureFrame }) {
+  const lengthM = scaleBarM(frame);
+  const y = frame.height - 18;
+  const end = 16 + lengthM * frame.unitsPerM;
+  return (
+    <g className="stroke-ink">
+      <path d={`M16 ${y - 5} V${y} H${end} V${y - 5}`} fill="none" />
+      <text x={end + 8} y={y + 2} className="fill-ink" stroke="none">{`${lengthM} m`}</text>
+    </g>
+  );
+}
+
+function NorthArrow({ frame, northBearingDeg }: { frame: FigureFrame; northBearingDeg: number }) {
+  return (
+    <g transform={`translate(${frame.width - 28} 30)`}>
+      <g transform={`rotate(${-northBearingDeg})`} className="stroke-ink">
+        <path d="M0 16 V-16 M-5 -7 L0 -16 L5 -7" fill="none" />
+      </g>
+      <text x="-16" y="5" textAnchor="end" className="fill-ink">
+        N
+      </text>
+    </g>
+  );
+}
