@@ -3,7 +3,8 @@ import { errorBody, type Refusal } from "~/domain/errors";
 /** Headers of every answer that the application itself makes; Astro adds the pages' Content-Security-Policy. */
 export const securityHeaders: Readonly<Record<string, string>> = {
   "X-Content-Type-Options": "nosniff",
-  "Referrer-Policy": "no-referrer",
+  // With no-referrer browsers post forms with "Origin: null", which is refused as foreign.
+  "Referrer-Policy": "same-origin",
   "X-Frame-Options": "DENY",
   "Cross-Origin-Opener-Policy": "same-origin",
   "Cross-Origin-Resource-Policy": "same-origin",
