@@ -54,7 +54,7 @@ test("files get the security headers; a page's own policy replaces the files'", 
     response.end();
   });
   const { headers } = await send(port, { path: "/_assets/a.js" });
-  expect(headers).toMatchObject({ "x-content-type-options": "nosniff", "referrer-policy": "no-referrer" });
+  expect(headers).toMatchObject({ "x-content-type-options": "nosniff", "referrer-policy": "same-origin" });
   expect(headers["strict-transport-security"]).toContain("max-age=31536000");
   expect(headers["content-security-policy"]).toContain("frame-ancestors 'none'");
   expect((await send(port, { path: "/page" })).headers["content-security-policy"]).toBe("default-src 'self'");
