@@ -15,11 +15,13 @@ export const preliminaryMark = "PRELIMINARY, NOT FOR MOUNTING";
 export const coveringTextMaxLength = 4000;
 export const maxRecipients = 100;
 
+const controlsButLineEndAndTab = /[^\P{Cc}\n\t]/gu;
+
 /** Plain text; line ends are made uniform so that preview, mail and database agree. */
 export const coveringTextSchema = z
   .string()
   .max(coveringTextMaxLength, `The covering text has at most ${coveringTextMaxLength} characters.`)
-  .transform((text) => text.replace(/\r\n?/g, "\n").trim());
+  .transform((text) => text.replace(/\r\n?/g, "\n").replace(controlsButLineEndAndTab, "").trim());
 
 export const recipientSchema = z.strictObject({
   name: z

@@ -8,6 +8,7 @@ describe("judgeFailure", () => {
   it("takes a 5xx answer to the recipient or the message for final", () => {
     expect(judgeFailure(smtpError("EENVELOPE", 550, "550 5.1.1 No such user")).isFinal).toBe(true);
     expect(judgeFailure(smtpError("EMESSAGE", 554)).isFinal).toBe(true);
+    expect(judgeFailure(new Error("The Subject of a message has a line break.")).isFinal).toBe(true);
   });
 
   it("tries again after 4xx, lost connections, failed sign-in and refused TLS", () => {

@@ -14,7 +14,8 @@ export interface Failure {
 /** What an error of the transport means for the message. */
 export function judgeFailure(error: unknown): Failure {
   if (!(error instanceof Error)) return { isFinal: false, answer: "The message could not be sent." };
-  const code = "code" in error && typeof error.code === "string" ? error.code : "";
+  // The transport gives every error of its own a code; one without was thrown by our checks and would be again.
+  const code = "code" in error && typeof error.code === "string" ? error.code : "EMESSAGE";
   const status =
     "responseCode" in error && typeof error.responseCode === "number" ? error.responseCode : null;
   const isFinal = messageCodes.has(code) && (status === null || status >= 500);

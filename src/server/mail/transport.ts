@@ -13,13 +13,11 @@ export interface MailTransport {
   close(): void;
 }
 
-/** A connection to the mail server of SMTP_URL that is kept from message to message. */
+/** The way to the mail server of SMTP_URL; each message has a connection of its own, so none idles between them. */
 export function openMailTransport(): MailTransport {
   const { smtpUrl, mailFrom } = env();
   const transport = createTransport({
     url: smtpUrl,
-    pool: true,
-    maxConnections: 1,
     // A mail server on this machine has no certificate that its loopback address could match.
     ignoreTLS: loopbackHosts.has(new URL(smtpUrl).hostname),
     connectionTimeout: 15_000,

@@ -39,7 +39,7 @@ export const noticeMessages = mysqlTable("notice_messages", {
   subject: label("subject", 300).notNull(),
   html: exactText("html").notNull(),
   text: exactText("text").notNull(),
-  /** The positions as CSV, without the byte order mark. */
+  /** The attached file, its byte order mark included. */
   positionsCsv: exactText("positions_csv").notNull(),
   csvFileName: label("csv_file_name").notNull(),
   replyToName: label("reply_to_name").notNull(),

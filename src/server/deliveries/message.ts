@@ -1,0 +1,53 @@
+import { mintSignInLink } from "../auth/sign-in-links";
+import { db } from "../db/client";
+import type { DeliveryRow } from "../db/queries/deliveries";
+import { findNoticeMessage, findRecipient } from "../db/queries/notices";
+import { findUser } from "../db/queries/people";
+import type { MailMessage } from "../mail/message";
+import { signInLinkMail } from "../mail/sign-in-link";
+
+const minuteMs = 60_000;
+
+/** The outbox row's message; undefined when who or what it was about is no longer there. */
+export async function messageOf(row: DeliveryRow, now: Date): Promise<MailMessage | undefined> {
+  return row.kind === "notice" ? noticeMessage(row) : signInMessage(row, now);
+}
+
+async function noticeMessage({
+  organisationId,
+  recipientId,
+  messageId,
+}: DeliveryRow): Promise<MailMessage | undefined> {
+  if (recipientId === null) return undefined;
+  const recipient = await findRecipient(db(), organisationId, recipientId);
+  if (recipient === undefined) return undefined;
+  const message = await findNoticeMessage(db(), organisationId, recipient.noticeId);
+  if (message === undefined) return undefined;
+  return {
+    messageId,
+    to: { name: recipient.name, email: recipient.email },
+    replyTo: { name: message.replyToName, email: message.replyToEmail },
+    subject: message.subject,
+    text: message.text,
+    html: message.html,
+    attachments: [
+      { fileName: message.csvFileName, mediaType: "text/csv; charset=utf-8", content: message.positionsCsv },
+    ],
+  };
+}
+
+async function signInMessage(
+  { userId, messageId }: DeliveryRow,
+  now: Date,
+): Promise<MailMessage | undefined> {
+  const user = userId === null ? undefined : await findUser(db(), userId);
+  if (user === undefined) return undefined;
+  const { url, expiresAt } = await mintSignInLink(db(), user.id, now);
+  const minutes = Math.round((expiresAt.getTime() - now.getTime()) / minuteMs);
+  return {
+    messageId,
+    to: { name: user.name, email: user.email },
+    ...signInLinkMail({ name: user.name, url, minutes }),
+    attachments: [],
+  };
+}
