@@ -15,7 +15,7 @@ const startEntry = (
   name: string,
   entry: string,
   environment: Record<string, string>,
-  logFolder: string,
+  logFolder: string | undefined,
 ): Promise<ManagedProcess> =>
   ManagedProcess.start({
     name,
@@ -23,18 +23,19 @@ const startEntry = (
     args: ["--enable-source-maps", nodeEntry(entry)],
     cwd: repositoryFolder,
     env: { ...baseEnvironment(), ...environment },
-    logFile: join(logFolder, `${entry}.log`),
+    ...(logFolder ? { logFile: join(logFolder, `${entry}.log`) } : { echo: true }),
     readyWhen: "message",
   });
 
+/** Without a log folder the process's log is shown here. */
 export const startServer = (
   environment: Record<string, string>,
-  logFolder: string,
+  logFolder?: string,
 ): Promise<ManagedProcess> => startEntry("the app's server", "server", environment, logFolder);
 
 export const startDeliveryWorker = (
   environment: Record<string, string>,
-  logFolder: string,
+  logFolder?: string,
 ): Promise<ManagedProcess> => startEntry("the delivery worker", "delivery-worker", environment, logFolder);
 
 export const migrateDatabase = (
@@ -44,6 +45,13 @@ export const migrateDatabase = (
   runCommand(process.execPath, [nodeEntry("migrate")], {
     cwd: repositoryFolder,
     env: { ...baseEnvironment(), ...environment, MIGRATION_DATABASE_URL: ownerUrl },
+  });
+
+/** Whether the database is of this version, asked as the application's user; nothing is changed. */
+export const checkDatabase = (environment: Record<string, string>): Promise<CommandResult> =>
+  runCommand(process.execPath, [nodeEntry("migrate"), "--check"], {
+    cwd: repositoryFolder,
+    env: { ...baseEnvironment(), ...environment },
   });
 
 export const seedDemo = (environment: Record<string, string>): Promise<CommandResult> =>

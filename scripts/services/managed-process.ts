@@ -11,6 +11,8 @@ export interface ProcessRecipe {
   cwd?: string;
   /** Everything the process prints is appended here. */
   logFile?: string;
+  /** Shown as it comes as well, for a process whose log is this process's own. */
+  echo?: boolean;
   /**
    * How the process says that it is ready: `message` waits for an IPC message `"ready"` (our own Node
    * processes), a pattern waits for a line that it prints.
@@ -46,7 +48,7 @@ export class ManagedProcess {
   private constructor(
     readonly name: string,
     private readonly child: ChildProcess,
-    logFile: string | undefined,
+    { logFile, echo = false }: Pick<ProcessRecipe, "logFile" | "echo">,
   ) {
     if (logFile) mkdirSync(dirname(logFile), { recursive: true });
     this.log = logFile ? createWriteStream(logFile, { flags: "a", mode: 0o600 }) : undefined;
@@ -60,6 +62,10 @@ export class ManagedProcess {
         resolve({ code, signal });
       });
     });
+    if (echo) {
+      child.stdout?.pipe(process.stdout, { end: false });
+      child.stderr?.pipe(process.stderr, { end: false });
+    }
     child.stdout?.on("data", (chunk: Buffer) => this.keep(chunk));
     child.stderr?.on("data", (chunk: Buffer) => this.keep(chunk));
   }
@@ -73,7 +79,7 @@ export class ManagedProcess {
       ...(recipe.env ? { env: recipe.env } : {}),
       ...(recipe.cwd ? { cwd: recipe.cwd } : {}),
     });
-    const managed = new ManagedProcess(recipe.name, child, recipe.logFile);
+    const managed = new ManagedProcess(recipe.name, child, recipe);
     try {
       await managed.becomesReady(recipe.readyWhen, recipe.readyWithinMs ?? 60_000);
     } catch (error) {

@@ -20,7 +20,7 @@ export interface MigrationTask {
  * @throws MigrationFailure
  */
 export async function applyMigrations(task: MigrationTask): Promise<number> {
-  const connection = await connect(task.ownerUrl);
+  const connection = await connect(task.ownerUrl, "MIGRATION_DATABASE_URL");
   try {
     await takeLock(connection, task.lockTimeoutS ?? 60);
     const known = knownMigrations(task.migrationsFolder);
@@ -35,13 +35,33 @@ export async function applyMigrations(task: MigrationTask): Promise<number> {
   }
 }
 
-async function connect(ownerUrl: string): Promise<Connection> {
+/**
+ * Asks as the application's user whether the database is of this version, and changes nothing.
+ * @throws MigrationFailure `newer`, `older` or `changed`
+ */
+export async function checkDatabase(appUrl: string, migrationsFolder: string): Promise<void> {
+  const connection = await connect(appUrl, "DATABASE_URL");
   try {
-    return await createConnection({ uri: ownerUrl, timezone: "Z", supportBigNumbers: true });
+    const known = knownMigrations(migrationsFolder);
+    const applied = await appliedMigrations(connection);
+    checkHistory(applied, known);
+    if (applied.length === known.length) return;
+    throw new MigrationFailure(
+      "older",
+      `The database lacks ${known.length - applied.length} migration(s) of this version. Run "npm run migrate" first.`,
+    );
+  } finally {
+    await connection.end();
+  }
+}
+
+async function connect(url: string, variable: string): Promise<Connection> {
+  try {
+    return await createConnection({ uri: url, timezone: "Z", supportBigNumbers: true });
   } catch (error) {
     throw new MigrationFailure(
       "unreachable",
-      `The database of MIGRATION_DATABASE_URL does not answer: ${String(error)}. Check its address and its user.`,
+      `The database of ${variable} does not answer: ${String(error)}. Check its address and its user.`,
     );
   }
 }

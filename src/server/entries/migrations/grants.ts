@@ -18,14 +18,17 @@ export async function grantToApplication(owner: Connection, appUrl: string): Pro
     const [tables] = await owner.query<RowDataPacket[]>("show full tables where table_type = 'BASE TABLE'");
     for (const row of tables) {
       const table = String(Object.values(row)[0]);
-      if (table === migrationsTable) continue;
-      const rights = appendOnlyTables.has(table) ? "select, insert" : "select, insert, update, delete";
-      await owner.query(`grant ${rights} on ?? to ?@?`, [table, account.user, account.host]);
+      await owner.query(`grant ${rightsOn(table)} on ?? to ?@?`, [table, account.user, account.host]);
     }
     await checkRights(app);
   } finally {
     await app.end();
   }
+}
+
+function rightsOn(table: string): string {
+  if (table === migrationsTable) return "select";
+  return appendOnlyTables.has(table) ? "select, insert" : "select, insert, update, delete";
 }
 
 /** Without a database in the address: before the first grant the user may not enter it. */
