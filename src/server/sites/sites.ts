@@ -1,9 +1,19 @@
 import { type Fault, Refusal } from "~/domain/errors";
 import type { Member } from "~/domain/permissions";
+import type { EarthElements } from "~/domain/screening-result";
 import { recordActivity } from "../activity/record";
 import { db } from "../db/client";
 import { isDuplicateEntry } from "../db/duplicate-entry";
-import { insertSite, type SiteRow, updateSite } from "../db/queries/sites";
+import {
+  findSite,
+  insertSite,
+  listContacts,
+  type SiteContactRow,
+  type SiteRow,
+  updateSite,
+} from "../db/queries/sites";
+import { type PlanSummary, planSummaries } from "../desk/desk";
+import { earthElementsAt } from "./earth-at-site";
 import type { SiteChangeInput, SiteInput } from "./site-input";
 
 const refuseInput = (fault: Fault, cause?: unknown) =>
@@ -79,3 +89,25 @@ export async function changeSite(member: Member, site: SiteRow, change: SiteChan
 
 const pick = (site: SiteRow, keys: readonly string[]) =>
   Object.fromEntries(Object.entries(site).filter(([key]) => keys.includes(key)));
+
+export interface SiteOverview {
+  site: SiteRow;
+  /** Empty for a member who may not read drafts. */
+  plans: PlanSummary[];
+  contacts: SiteContactRow[];
+  /** Of today, at the site; null while nobody has stated where on earth it is. */
+  earthField: EarthElements | null;
+}
+
+/** @throws Refusal not-found where the organisation has no such site */
+export async function siteOverview(member: Member, siteId: string): Promise<SiteOverview> {
+  const site = await findSite(db(), member.organisationId, siteId);
+  if (site === undefined)
+    throw new Refusal("not-found", "There is no such site, or it is not yours to see. Go back to your Desk.");
+  return {
+    site,
+    plans: (await planSummaries(member, [siteId])).get(siteId) ?? [],
+    contacts: await listContacts(db(), member.organisationId, siteId),
+    earthField: earthElementsAt(site, new Date()),
+  };
+}
