@@ -46,18 +46,21 @@ interface FileOptions {
   /** Offered as a download under this name; shown in place when left out. */
   fileName?: string;
   cacheControl?: string;
+  /** Default: nothing in it may load or run. */
+  contentSecurityPolicy?: string;
 }
 
 export function file(
   body: string | Uint8Array<ArrayBuffer> | ReadableStream,
   options: FileOptions,
 ): Response {
-  const { mediaType, fileName, cacheControl } = options;
+  const { mediaType, fileName, cacheControl, contentSecurityPolicy } = options;
   return new Response(body, {
     headers: {
       "Content-Type": mediaType,
       ...inertHeaders,
       ...(cacheControl !== undefined && { "Cache-Control": cacheControl }),
+      ...(contentSecurityPolicy !== undefined && { "Content-Security-Policy": contentSecurityPolicy }),
       ...(fileName !== undefined && { "Content-Disposition": contentDisposition(fileName) }),
     },
   });

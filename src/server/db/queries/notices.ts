@@ -23,6 +23,18 @@ export async function findNotice(db: Queryable, organisationId: string, planId: 
   return row;
 }
 
+export async function findNoticeById(
+  db: Queryable,
+  organisationId: string,
+  noticeId: string,
+): Promise<NoticeRow | undefined> {
+  const [row] = await db
+    .select()
+    .from(notices)
+    .where(and(eq(notices.organisationId, organisationId), eq(notices.id, noticeId)));
+  return row;
+}
+
 /** The notice, held against other transactions until this one ends. */
 export async function lockNotice(
   db: Queryable,

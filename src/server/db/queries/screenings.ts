@@ -71,7 +71,18 @@ export async function findScreeningResult(db: Queryable, organisationId: string,
   return row?.result;
 }
 
-/** A screening with its document and result, who ran it, and the version at which the plan's working copy now is. */
+/** A screening without its document and result, who ran it, and the version at which the plan's working copy now is. */
+export async function findScreeningHeading(db: Queryable, organisationId: string, screeningId: string) {
+  const [row] = await db
+    .select({ ...heading, screenedByName: users.name, currentVersion: planDocuments.version })
+    .from(screenings)
+    .leftJoin(users, eq(users.id, screenings.screenedBy))
+    .leftJoin(planDocuments, eq(planDocuments.planId, screenings.planId))
+    .where(and(eq(screenings.organisationId, organisationId), eq(screenings.id, screeningId)));
+  return row;
+}
+
+/** The same with its document and result, to the byte. */
 export async function findWholeScreening(db: Queryable, organisationId: string, screeningId: string) {
   const [row] = await db
     .select({
