@@ -7,7 +7,7 @@ import { generateSecrets } from "../../scripts/services/local-environment";
 import { startMariaDb, type MariaDb } from "../../scripts/services/mariadb";
 import { freePortBlock } from "../../scripts/services/ports";
 import { inRepository } from "../../scripts/services/repository";
-import { applyMigrations } from "../../src/server/entries/migrations/apply-migrations";
+import { applyMigrations } from "../../src/server/db/migrations/apply-migrations";
 
 const name = "stillneedle_test_migrations";
 let folder: string;

@@ -1,6 +1,6 @@
 import { createConnection } from "mysql2/promise";
 import { inRepository } from "../../scripts/services/repository";
-import { applyMigrations } from "../../src/server/entries/migrations/apply-migrations";
+import { applyMigrations } from "../../src/server/db/migrations/apply-migrations";
 import { databaseUrls, type TestServices } from "./test-services";
 
 export interface TestDatabase {

@@ -1,7 +1,7 @@
 import { fileURLToPath } from "node:url";
 import { env } from "../env";
-import { applyMigrations, checkDatabase } from "./migrations/apply-migrations";
-import { MigrationFailure, exitStatusOf } from "./migrations/migration-failure";
+import { applyMigrations, checkDatabase } from "../db/migrations/apply-migrations";
+import { MigrationFailure, exitStatusOf } from "../db/migrations/migration-failure";
 
 // As built this file is dist/node/migrate.mjs.
 const migrationsFolder = fileURLToPath(new URL("../../drizzle", import.meta.url));
