@@ -2,7 +2,16 @@ import type { PlanDocument } from "~/domain/plan-document/plan-document";
 import type { ScreeningResult } from "~/domain/screening-result";
 import { formatBudget } from "~/domain/format";
 import { NeedleMark } from "~/components/ui/NeedleMark";
-import { figureFrame, type FigureFrame, figureLines, type FigureLine, scaleBarM } from "./figure-geometry";
+import {
+  figureFrame,
+  type FigureFrame,
+  type FigureLabel,
+  figureLines,
+  type FigureLine,
+  type FigurePoint,
+  placeLabels,
+  scaleBarM,
+} from "./figure-geometry";
 import { type Position, positionsWorstFirst } from "~/domain/positions";
 import { numberedSources, sourceFinder } from "~/domain/sources";
 
@@ -19,7 +28,14 @@ const markSize = 30;
 /** The plan as it was screened: conductors in copper with their numbers, sensors as needle marks. */
 export function PlanFigure({ document, result, imageUrl, label }: Props) {
   const frame = figureFrame(document);
+  const lines = figureLines(document, frame);
   const find = sourceFinder(numberedSources(document));
+  const positions = positionsWorstFirst(document, result);
+  const marks = positions.map(({ sensor, verdict, governing }) => ({
+    at: frame.place(sensor.position),
+    letters: Math.max(shortened(sensor.name).length, budgetWords(governing?.budgetUsed ?? 0, verdict).length),
+  }));
+  const labels = placeLabels(marks, lines, frame, markSize / 2);
   return (
     <svg
       role="img"
@@ -38,7 +54,7 @@ export function PlanFigure({ document, result, imageUrl, label }: Props) {
           <ZoneName outline={outline} frame={frame} name={name} />
         </g>
       ))}
-      {figureLines(document, frame).map((line) => (
+      {lines.map((line) => (
         <Conductors
           key={line.circuitIds.join()}
           line={line}
@@ -66,9 +82,14 @@ export function PlanFigure({ document, result, imageUrl, label }: Props) {
           </g>
         );
       })}
-      {positionsWorstFirst(document, result).map((position) => (
-        <SensorMark key={position.sensor.id} position={position} frame={frame} />
-      ))}
+      {positions.map((position, index) => {
+        const label = labels[index];
+        const mark = marks[index];
+        return (
+          label &&
+          mark && <SensorMark key={position.sensor.id} position={position} at={mark.at} label={label} />
+        );
+      })}
       <ScaleBar frame={frame} />
       <NorthArrow frame={frame} northBearingDeg={document.frame.northBearingDeg} />
     </svg>
@@ -158,35 +179,47 @@ function Balloon({ at: [x, y], text }: { at: readonly [number, number]; text: st
   );
 }
 
-function SensorMark({ position, frame }: { position: Position; frame: FigureFrame }) {
-  const { sensor, verdict, governing } = position;
-  const [x, y] = frame.place(sensor.position);
+interface SensorMarkProps {
+  position: Position;
+  at: FigurePoint;
+  label: FigureLabel;
+}
+
+function SensorMark({ position: { sensor, verdict, governing }, at: [x, y], label }: SensorMarkProps) {
   const budgetUsed = governing?.budgetUsed ?? 0;
-  const toLeft = x > frame.width * 0.72;
-  const textX = toLeft ? x - markSize / 2 - 6 : x + markSize / 2 + 6;
+  const [textX, textY] = label.at;
   return (
     <g>
+      <title>{sensor.name}</title>
       <circle cx={x} cy={y} r={markSize / 2 + 1} className="fill-paper" />
       <svg x={x - markSize / 2} y={y - markSize / 2} width={markSize} height={markSize}>
         <NeedleMark budgetUsed={budgetUsed} verdict={verdict} size={markSize} title="" />
       </svg>
       <g
-        textAnchor={toLeft ? "end" : "start"}
+        textAnchor={label.anchor}
         className="fill-ink stroke-paper"
         strokeWidth="4"
         strokeLinejoin="round"
         paintOrder="stroke"
       >
-        <text x={textX} y={y - 1} fontWeight="600">
-          {sensor.name}
+        <text x={textX} y={textY} fontWeight="600">
+          {shortened(sensor.name)}
         </text>
-        <text x={textX} y={y + 15}>
-          {`${formatBudget(budgetUsed)}, ${verdict}`}
+        <text x={textX} y={textY + 16}>
+          {budgetWords(budgetUsed, verdict)}
         </text>
       </g>
     </g>
   );
 }
+
+const longestName = 30;
+
+const shortened = (name: string): string =>
+  name.length > longestName ? `${name.slice(0, longestName - 1).trimEnd()}…` : name;
+
+const budgetWords = (budgetUsed: number, verdict: string): string =>
+  `${formatBudget(budgetUsed)}, ${verdict}`;
 
 function ScaleBar({ frame }: { frame: FigureFrame }) {
   const lengthM = scaleBarM(frame);

@@ -121,3 +121,87 @@ export function scaleBarM({ width, unitsPerM }: FigureFrame): number {
   const decade = 10 ** Math.floor(Math.log10(wantedM));
   return ([5, 2, 1].find((step) => step * decade <= wantedM) ?? 1) * decade;
 }
+
+export interface FigureLabel {
+  anchor: "start" | "end" | "middle";
+  /** Of the upper of two lines. */
+  at: FigurePoint;
+}
+
+interface Box {
+  left: number;
+  right: number;
+  top: number;
+  bottom: number;
+}
+
+const lineHeight = 16;
+const letterWidth = 6.7;
+
+const sampleEvery = 8;
+
+/** Points along lines, close enough together that no label slips between them. */
+function sampled(lines: readonly FigureLine[]): FigurePoint[] {
+  return lines.flatMap(({ points }) =>
+    points.flatMap(([x, y], index) => {
+      const [nextX, nextY] = points[index + 1] ?? [x, y];
+      const steps = Math.ceil(Math.hypot(nextX - x, nextY - y) / sampleEvery);
+      return Array.from({ length: steps + 1 }, (_, step): FigurePoint => {
+        const share = steps === 0 ? 0 : step / steps;
+        return [x + share * (nextX - x), y + share * (nextY - y)];
+      });
+    }),
+  );
+}
+
+/**
+ * Places two-line labels beside marks: to the right, or wherever else around the mark they cover nothing; over a line
+ * rather than over another label, and to the right again where everything is covered.
+ */
+export function placeLabels(
+  marks: readonly { at: FigurePoint; letters: number }[],
+  lines: readonly FigureLine[],
+  { width }: Pick<FigureFrame, "width">,
+  markRadius: number,
+): FigureLabel[] {
+  const onLines = sampled(lines).map(([x, y]) => boxAround(x, y, 3, 3));
+  const taken: Box[] = marks.map(({ at: [x, y] }) => boxAround(x, y, markRadius, markRadius));
+  return marks.map(({ at: [x, y], letters }) => {
+    const length = letters * letterWidth;
+    const gap = markRadius + 6;
+    const candidates: FigureLabel[] = [
+      { anchor: "start", at: [x + gap, y - 3] },
+      { anchor: "end", at: [x - gap, y - 3] },
+      { anchor: "middle", at: [x, y + gap + lineHeight - 4] },
+      { anchor: "middle", at: [x, y - gap - lineHeight] },
+      { anchor: "start", at: [x + gap * 0.6, y - gap - lineHeight + 4] },
+      { anchor: "start", at: [x + gap * 0.6, y + gap + lineHeight - 8] },
+    ];
+    const boxes = candidates.map((label) => labelBox(label, length));
+    const fits = boxes.map(
+      (box) => box.left > 4 && box.right < width - 4 && !taken.some((other) => overlap(box, other)),
+    );
+    const free = boxes.findIndex(
+      (box, index) => fits[index] && !onLines.some((other) => overlap(box, other)),
+    );
+    const chosen = free >= 0 ? free : Math.max(0, fits.indexOf(true));
+    const box = boxes[chosen];
+    if (box !== undefined) taken.push(box);
+    return candidates[chosen] ?? { anchor: "start", at: [x, y] };
+  });
+}
+
+const boxAround = (x: number, y: number, halfWidth: number, halfHeight: number): Box => ({
+  left: x - halfWidth,
+  right: x + halfWidth,
+  top: y - halfHeight,
+  bottom: y + halfHeight,
+});
+
+function labelBox({ anchor, at: [x, y] }: FigureLabel, length: number): Box {
+  const left = anchor === "start" ? x : anchor === "end" ? x - length : x - length / 2;
+  return { left, right: left + length, top: y - lineHeight + 3, bottom: y + lineHeight + 3 };
+}
+
+const overlap = (a: Box, b: Box): boolean =>
+  a.left < b.right && b.left < a.right && a.top < b.bottom && b.top < a.bottom;

@@ -38,7 +38,6 @@ export function BudgetBar({ sensorName, compact = false, litId = null, onHover, 
         height={barHeight}
         className="fill-raised stroke-rule"
       />
-      <GuardBand guard={bar.guard} />
       {bar.segments.map((segment, index) => (
         <Segment
           key={segment.id}
@@ -48,6 +47,7 @@ export function BudgetBar({ sensorName, compact = false, litId = null, onHover, 
           onHover={onHover}
         />
       ))}
+      <GuardBand guard={bar.guard} />
       <Upright at={bar.zero} from={barTop - 2} to={barTop + barHeight + 4} className="stroke-ink" width={1} />
       <Upright at={bar.full} from={0} to={barTop + barHeight + 6} className="stroke-ink" width={2} />
       <ValueMark at={bar.value} />
@@ -101,15 +101,14 @@ function GuardBand({ guard }: { guard: BudgetBarGeometry["guard"] }) {
   const top = 2;
   const bottom = barTop + barHeight + 4;
   return (
-    <g>
-      <title>guard band: a value inside it is undecided</title>
+    <g pointerEvents="none">
       <rect
         x={percent(guard.from)}
         y={top}
         width={percent(guard.width)}
         height={bottom - top}
         className="fill-undecided"
-        fillOpacity="0.16"
+        fillOpacity="0.2"
       />
       {[guard.from, guard.from + guard.width].map((at) => (
         <line
