@@ -1,5 +1,5 @@
 import { randomBytes } from "node:crypto";
-import type { MiddlewareNext } from "astro";
+import type { APIContext, MiddlewareNext } from "astro";
 import { defineMiddleware } from "astro:middleware";
 import { Refusal } from "~/domain/errors";
 import { authorise } from "~/server/auth/guard";
@@ -28,6 +28,14 @@ async function answerOfEndpoint(next: MiddlewareNext): Promise<Response> {
   if (response.status !== 404 || (!isPage && response.headers.has("X-Astro-Reroute"))) return response;
   await response.body?.cancel();
   throw new Refusal("not-found", "There is no such endpoint, or it does not take this method.");
+}
+
+/** Astro gives the page /500 the status 500 whatever the page itself says. */
+async function errorPage(context: APIContext, status: number): Promise<Response> {
+  const page = await context.rewrite(status === 404 ? "/404" : "/500");
+  const headers = new Headers(page.headers);
+  headers.set("Cache-Control", "no-store");
+  return new Response(page.body, { status, headers });
 }
 
 export const onRequest = defineMiddleware(async (context, next) => {
@@ -60,7 +68,7 @@ export const onRequest = defineMiddleware(async (context, next) => {
       if (refusal.code === "sign-in.required" && request.method === "GET")
         return seeOther(`/sign-in?returnTo=${encodeURIComponent(url.pathname)}`);
       locals.refusal = refusal;
-      return context.rewrite(refusal.status === 404 ? "/404" : "/500");
+      return await errorPage(context, refusal.status);
     }
   };
 

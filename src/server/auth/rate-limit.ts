@@ -1,6 +1,6 @@
 import { Refusal } from "~/domain/errors";
 import { db } from "../db/client";
-import { attemptsIn, countAttempt } from "../db/queries/rate-limits";
+import { attemptsIn, countAttempt, takeAttemptBack } from "../db/queries/rate-limits";
 import { type RateLimit, waitBeforeNextMs, windowStart } from "./rate-window";
 import { hashOf } from "./secrets";
 
@@ -25,10 +25,12 @@ export async function limitRate(deed: LimitedDeed, key: string, now = new Date()
   const rate: RateLimit = rates[deed];
   const bucket = `${deed}:${hashOf(key)}`;
   const startedAt = windowStart(now, rate);
-  const current = await countAttempt(db(), bucket, startedAt);
+  const ordinal = await countAttempt(db(), bucket, startedAt);
   const previous = await attemptsIn(db(), bucket, new Date(startedAt.getTime() - rate.windowMs));
-  const waitMs = waitBeforeNextMs({ current, previous }, rate, now);
+  const waitMs = waitBeforeNextMs({ current: ordinal - 1, previous }, rate, now);
   if (waitMs === 0) return;
+  // A refused attempt does not count, or hammering would lock an address out for good.
+  await takeAttemptBack(db(), bucket, startedAt);
   const retryAfterS = Math.max(1, Math.ceil(waitMs / 1000));
   throw new Refusal("rate.exceeded", `Too many attempts. Wait ${waitInWords(retryAfterS)} and try again.`, {
     detail: { retryAfterS },
