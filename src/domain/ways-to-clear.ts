@@ -31,7 +31,7 @@ function waysToLessField(judged: Judged): string[] {
   const inCase = document.loadCases.length > 1 ? " in the load case that governs" : "";
   if (share !== null && share >= 0.01)
     sentences.push(
-      `All sources drawn, taken down together to ${wholePercent(Math.floor(share * 100))} of what is stated, would bring it within${inCase}.`,
+      `All sources drawn, taken down together to ${wholePercent(Math.floor(share * 100))} of what is stated, would bring it within its limit${inCase}.`,
     );
   const largest = largestSpender(finding);
   if (largest === null || finding.value <= finding.limit) return sentences;

@@ -73,8 +73,8 @@ export interface NoticeContent {
   origin: readonly (readonly [label: string, value: string])[];
 }
 
-/** A message stays readable, and under every server's limit; the CSV and the page have all of them. */
-const most = { flagged: 40, within: 40, waiting: 30, checks: 20, spenders: 5, subjectName: 60 };
+/** A message stays readable, and under the 100 kB from which mail programs cut it; the CSV and the page have all of them. */
+const most = { flagged: 30, within: 40, waiting: 30, checks: 20, spenders: 5, subjectName: 60 };
 
 export function noticeContent(source: NoticeSource): NoticeContent {
   const { site, plan, screening, notice, document, result, plannerName } = source;
@@ -96,7 +96,7 @@ export function noticeContent(source: NoticeSource): NoticeContent {
       ["Notice", `version ${String(notice.version)}, sent by ${oneLine(plannerName)}`],
     ],
     coveringText: notice.coveringText,
-    summary: `${capitalised(counts)}, ${fromSourcesDrawn(drawnSourceCount(document))}.`,
+    summary: `${counted(positions.length, "position", "positions")}: ${counts}, ${fromSourcesDrawn(drawnSourceCount(document))}.`,
     flagged: flagged.slice(0, most.flagged).map((position) => flaggedPosition(position, source, nameOf)),
     flaggedLeftOut: moreWords(flagged.length - most.flagged, "flagged position", "flagged positions"),
     within: within.slice(0, most.within).map(withinWords),
@@ -191,7 +191,7 @@ const placeWords = ([x, y, z]: Point): string =>
   `x ${formatLength(x)}, y ${formatLength(y)}, height ${formatLength(z)}`;
 
 function countWords(positions: readonly Position[]): string {
-  if (positions.length === 0) return "no position to judge";
+  if (positions.length === 0) return "nothing to judge";
   const { over, undecided, within } = countVerdicts(positions.map(({ verdict }) => verdict));
   return [
     ...(over > 0 ? [`${String(over)} over`] : []),
@@ -199,8 +199,6 @@ function countWords(positions: readonly Position[]): string {
     ...(within > 0 ? [`${String(within)} within`] : []),
   ].join(", ");
 }
-
-const capitalised = (text: string): string => text.charAt(0).toUpperCase() + text.slice(1);
 
 const moreWords = (count: number, one: string, many: string): string | null =>
   count > 0 ? `${counted(count, `more ${one}`, `more ${many}`)}; the CSV and the page list them.` : null;

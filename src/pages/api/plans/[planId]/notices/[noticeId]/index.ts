@@ -1,6 +1,6 @@
 import { named } from "~/server/auth/scope";
 import { endpoint } from "~/server/http/endpoint";
-import { noContent } from "~/server/http/respond";
+import { json } from "~/server/http/respond";
 import { changeNotice, noticeChangeInput } from "~/server/notices/compose";
 
 export const PATCH = endpoint(
@@ -10,7 +10,8 @@ export const PATCH = endpoint(
     body: noticeChangeInput,
   },
   async ({ scope, body }) => {
-    await changeNotice(named(scope, "notice"), body);
-    return noContent();
+    const notice = named(scope, "notice");
+    await changeNotice(notice, body);
+    return json({ id: notice.id });
   },
 );
