@@ -1,6 +1,7 @@
 import { setTimeout as pause } from "node:timers/promises";
 import { db } from "../db/client";
 import { deleteSettledSignInDeliveries } from "../db/queries/deliveries";
+import { errorReport } from "../error-report";
 import { log } from "../log";
 import { openMailTransport } from "../mail/transport";
 import { deliverNext } from "./deliver";
@@ -29,7 +30,7 @@ export async function runDeliveryWorker({ signal }: { signal: AbortSignal }): Pr
         while (!isStopping() && (await deliverNext(transport)));
         pauseMs = pollMs;
       } catch (error) {
-        log().error({ error: reason(error) }, "the outbox could not be read; trying again");
+        log().error(errorReport(error), "the outbox could not be read; trying again");
         pauseMs = Math.min(pauseMs * 2, longestPauseMs);
       }
       await pause(pauseMs, undefined, { signal }).catch(() => undefined);
@@ -37,11 +38,4 @@ export async function runDeliveryWorker({ signal }: { signal: AbortSignal }): Pr
   } finally {
     transport.close();
   }
-}
-
-/** A failed query carries its bound parameters in its message, so only the cause's code is kept. */
-function reason(error: unknown): string {
-  const cause = error instanceof Error && error.cause instanceof Error ? error.cause : error;
-  if (cause instanceof Error) return "code" in cause ? String(cause.code) : cause.name;
-  return typeof cause;
 }

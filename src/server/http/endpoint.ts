@@ -4,6 +4,7 @@ import { Refusal } from "~/domain/errors";
 import type { Action, Member, Principal, permissions } from "~/domain/permissions";
 import { authorise } from "../auth/guard";
 import type { Scope } from "../auth/scope";
+import { errorReport } from "../error-report";
 import { log } from "../log";
 import { parseBody } from "./body";
 import { refused } from "./respond";
@@ -85,26 +86,10 @@ export function endpoint<
 export function asRefusal(error: unknown, context: Pick<APIContext, "locals" | "routePattern">): Refusal {
   if (error instanceof Refusal) return error;
   const { requestId } = context.locals;
-  log().error({ requestId, route: context.routePattern, ...describe(error) }, "unforeseen error");
+  log().error({ requestId, route: context.routePattern, ...errorReport(error) }, "unforeseen error");
   return new Refusal(
     "internal",
     `Something went wrong on our side and nothing was changed. Try again; if it happens again, report the number ${requestId}.`,
     { detail: { requestId } },
   );
 }
-
-/** What may be logged of an error: a failed query carries its bound parameters in its message, so only the cause's code is kept. */
-function describe(error: unknown): { error: string; stack?: string | undefined } {
-  if (!(error instanceof Error)) return { error: typeof error };
-  if (error.name === "DrizzleQueryError" || "sql" in error) {
-    const cause = error.cause instanceof Error ? error.cause : error;
-    return { error: "code" in cause ? String(cause.code) : cause.name, stack: stackOnly(error) };
-  }
-  return { error: error.message, stack: stackOnly(error) };
-}
-
-const stackOnly = (error: Error): string | undefined =>
-  error.stack
-    ?.split("\n")
-    .filter((line) => line.startsWith("    at "))
-    .join("\n");
