@@ -1,0 +1,200 @@
+import { useRef, useState } from "react";
+import { circuitsOn, sameOwner, type PathOwner } from "~/sheet/edits/paths";
+import { updateSensor } from "~/sheet/edits/sensors";
+import type { PlanDocument } from "~/domain/plan-document/plan-document";
+import { crossingsAt, heightRange, liftRun, profilesOf } from "~/sheet/section";
+import { itemOfPath, selectedOwners } from "~/sheet/selection";
+import { tidyM } from "~/sheet/geometry";
+import { toPlan } from "~/sheet/view";
+import { HeightHandle } from "./HeightHandle";
+import { useEditable, useSelection, useSheet, useSheetStore, useShownDocument } from "./store";
+
+const heightPx = 168;
+const marginPx = 22;
+/** Sensors nearer than this to the slice stand in it; others are left out. */
+const sliceDepthM = 0.75;
+
+interface Slice {
+  y: number;
+  centreX: number;
+  words: string;
+}
+
+/** Through the selected sensor; else through the middle of what the drawing shows. */
+function useSlice(document: PlanDocument): Slice {
+  const selection = useSelection();
+  const view = useSheet((state) => state.view);
+  const size = useSheet((state) => state.size);
+  const [chosen] = selection.filter((item) => item.kind === "sensor");
+  const sensor = document.sensors.find(({ id }) => id === chosen?.id);
+  if (sensor !== undefined) {
+    return { y: sensor.position[1], centreX: sensor.position[0], words: `through ${sensor.name}` };
+  }
+  const [x, y] = toPlan(view, [size.width / 2, size.height / 2]);
+  return {
+    y: tidyM(y),
+    centreX: x,
+    words: "through the middle of the view; select a sensor to slice through it",
+  };
+}
+
+/** A vertical slice along x, to scale in both directions, with heights to drag or to change by arrow keys. */
+export function SectionStrip() {
+  const store = useSheetStore();
+  const document = useShownDocument();
+  const selection = useSelection();
+  const editable = useEditable();
+  const width = useSheet(({ size }) => size.width);
+  const litId = useSheet((state) => state.litId);
+  const slice = useSlice(document);
+  const svg = useRef<SVGSVGElement>(null);
+  const [liftM, setLiftM] = useState<{ key: string; byM: number } | null>(null);
+  const { lowM, highM } = heightRange(document);
+  const scale = (heightPx - 2 * marginPx) / (highM - lowM);
+  const px = (x: number): number => width / 2 + (x - slice.centreX) * scale;
+  const py = (z: number): number => heightPx - marginPx - (z - lowM) * scale;
+  const crossings = crossingsAt(document, slice.y);
+  const sensors = document.sensors.filter(({ position }) => Math.abs(position[1] - slice.y) <= sliceDepthM);
+  const chosenOwners = selectedOwners(document, selection);
+  const isLit = (owner: PathOwner): boolean =>
+    chosenOwners.some((chosen) => sameOwner(chosen, owner)) ||
+    circuitsOn(document, owner).some(({ id }) => id === litId);
+
+  const handle = (
+    key: string,
+    label: string,
+    at: readonly [number, number],
+    lift: (byM: number) => void,
+  ) => ({
+    label,
+    editable,
+    heightM: at[1],
+    x: px(at[0]),
+    y: py(at[1] + (liftM?.key === key ? liftM.byM : 0)),
+    metresPerPixel: 1 / scale,
+    stepM: store.get().snap.gridM > 0 ? store.get().snap.gridM : 0.1,
+    onDrag: (byM: number | null) => setLiftM(byM === null ? null : { key, byM }),
+    onLift: lift,
+  });
+
+  return (
+    <section aria-label="Section strip" className="border-b border-rule bg-raised">
+      <h2 className="sr-only">Section strip</h2>
+      <p className="px-3 pt-1 text-xs text-muted">
+        Section at y = {slice.y.toFixed(2)} m, {slice.words}
+      </p>
+      <svg
+        ref={svg}
+        width={width}
+        height={heightPx}
+        className="block"
+        role="group"
+        aria-label="Heights in the section"
+      >
+        <Scale
+          lowM={lowM}
+          highM={highM}
+          px={px}
+          py={py}
+          width={width}
+          centreX={slice.centreX}
+          scale={scale}
+        />
+        {profilesOf(document).map(({ owner, points }) => (
+          <polyline
+            key={`${owner.list}/${owner.id}`}
+            points={points.map(([x, z]) => `${px(x)},${py(z)}`).join(" ")}
+            fill="none"
+            className={isLit(owner) ? "stroke-accent" : "stroke-copper"}
+            strokeOpacity={isLit(owner) ? 0.8 : 0.35}
+            strokeWidth="1.5"
+          />
+        ))}
+        {crossings.map(({ owner, name, leg, at }) => (
+          <HeightHandle
+            key={`${owner.list}/${owner.id}/${leg}`}
+            {...handle(`${owner.id}/${leg}`, `Height of ${name} at x ${at[0].toFixed(2)} m`, at, (byM) =>
+              store.edit(`Lift ${name}`, (whole) => liftRun(whole, owner, leg, byM)),
+            )}
+            onFocus={() => store.select([itemOfPath(document, owner)])}
+          >
+            <circle
+              r="5"
+              className={isLit(owner) ? "fill-accent stroke-paper" : "fill-copper stroke-paper"}
+              strokeWidth="1.5"
+            />
+          </HeightHandle>
+        ))}
+        {sensors.map(({ id, name, position }) => {
+          const chosen = selection.some((item) => item.kind === "sensor" && item.id === id);
+          return (
+            <HeightHandle
+              key={id}
+              {...handle(id, `Height of ${name}`, [position[0], position[2]], (byM) =>
+                store.edit(`Height of ${name}`, (whole) =>
+                  updateSensor(whole, id, (sensor) => ({
+                    ...sensor,
+                    position: [sensor.position[0], sensor.position[1], tidyM(sensor.position[2] + byM)],
+                  })),
+                ),
+              )}
+            >
+              <circle
+                r="8"
+                className={`fill-paper ${chosen ? "stroke-accent" : "stroke-ink"}`}
+                strokeWidth={chosen ? 3 : 1.75}
+              />
+              <line y1="-7" y2="7" className="stroke-ink" strokeWidth="1.75" />
+              <text x="13" y="4" className="fill-ink text-xs">
+                {`${name}, ${(position[2] + (liftM?.key === id ? liftM.byM : 0)).toFixed(2)} m`}
+              </text>
+            </HeightHandle>
+          );
+        })}
+      </svg>
+    </section>
+  );
+}
+
+interface ScaleProps {
+  lowM: number;
+  highM: number;
+  px: (x: number) => number;
+  py: (z: number) => number;
+  width: number;
+  centreX: number;
+  scale: number;
+}
+
+/** The floor, a line for each metre of height, and ticks for each metre along the slice. */
+function Scale({ lowM, highM, px, py, width, centreX, scale }: ScaleProps) {
+  const everyM = highM - lowM > 12 ? 5 : 1;
+  const heights: number[] = [];
+  for (let z = Math.ceil(lowM / everyM) * everyM; z <= highM; z += everyM) heights.push(z);
+  const along: number[] = [];
+  const halfM = width / 2 / scale;
+  for (let x = Math.ceil((centreX - halfM) / everyM) * everyM; x <= centreX + halfM; x += everyM)
+    along.push(x);
+  return (
+    <g aria-hidden="true">
+      {heights.map((z) => (
+        <g key={z}>
+          <line
+            x1="34"
+            x2={width}
+            y1={py(z)}
+            y2={py(z)}
+            className={z === 0 ? "stroke-ink" : "stroke-rule"}
+            strokeWidth={z === 0 ? 1.5 : 1}
+          />
+          <text x="30" y={py(z) + 4} textAnchor="end" className="fill-muted text-xs">
+            {z} m
+          </text>
+        </g>
+      ))}
+      {along.map((x) => (
+        <line key={x} x1={px(x)} x2={px(x)} y1={py(0) - 3} y2={py(0) + 3} className="stroke-rule-strong" />
+      ))}
+    </g>
+  );
+}

@@ -1,0 +1,81 @@
+import { useMemo } from "react";
+import type { PlanDocument } from "~/domain/plan-document/plan-document";
+import type { Verdict } from "~/domain/screening-result";
+import { circuitsOn, ownedPaths, ownerOfCircuit, sameOwner, type OwnedPath } from "~/sheet/edits/paths";
+import { entriesOf } from "~/sheet/ledger";
+import { selectedOwners } from "~/sheet/selection";
+import { useSelection, useSheet, useShownDocument } from "../store";
+import { PathShape, type Carried } from "./PathShape";
+import { SensorShape } from "./SensorShape";
+import { VertexHandles } from "./VertexHandles";
+import type { Palette } from "./use-palette";
+
+const bare: Carried = { dc: false, ac: false, reversed: false };
+
+function carriedBy(document: PlanDocument, { owner }: OwnedPath): Carried {
+  return circuitsOn(document, owner).reduce<Carried>((carried, { supply }) => {
+    if (supply === null) return carried;
+    if (supply.kind !== "dc") return { ...carried, ac: true };
+    return { ...carried, dc: true, reversed: supply.currentA < 0 };
+  }, bare);
+}
+
+/** Routes with what they carry, and sensors with their needles. */
+export function PlanShapes({ scale, palette }: { scale: number; palette: Palette }) {
+  const document = useShownDocument();
+  const selection = useSelection();
+  const litId = useSheet((state) => state.litId);
+  const live = useSheet((state) => state.live);
+  const verdicts = useMemo(() => {
+    const known = new Map<string, { verdict: Verdict; budgetUsed: number }>();
+    if (live.kind !== "screened") return known;
+    for (const { sensorId, verdict, finding } of entriesOf(document, live.result)) {
+      known.set(sensorId, { verdict, budgetUsed: finding.budgetUsed });
+    }
+    return known;
+  }, [document, live]);
+  const paths = useMemo(
+    () => ownedPaths(document).map((owned) => ({ owned, carried: carriedBy(document, owned) })),
+    [document],
+  );
+  const chosen = selectedOwners(document, selection);
+  const lit = document.circuits.find(({ id }) => id === litId);
+  const litOwner = lit === undefined ? null : ownerOfCircuit(lit);
+  return (
+    <>
+      {paths.map(({ owned, carried }) => (
+        <PathShape
+          key={`${owned.owner.list}/${owned.owner.id}`}
+          owned={owned}
+          carried={carried}
+          scale={scale}
+          palette={palette}
+          selected={chosen.some((owner) => sameOwner(owner, owned.owner))}
+          lit={litOwner !== null && sameOwner(litOwner, owned.owner)}
+        />
+      ))}
+      {paths
+        .filter(({ owned }) => chosen.some((owner) => sameOwner(owner, owned.owner)))
+        .map(({ owned }) => (
+          <VertexHandles
+            key={`${owned.owner.list}/${owned.owner.id}`}
+            owned={owned}
+            selection={selection}
+            scale={scale}
+            palette={palette}
+          />
+        ))}
+      {document.sensors.map((sensor) => (
+        <SensorShape
+          key={sensor.id}
+          sensor={sensor}
+          verdict={verdicts.get(sensor.id)?.verdict ?? null}
+          budgetUsed={verdicts.get(sensor.id)?.budgetUsed ?? 0}
+          scale={scale}
+          palette={palette}
+          selected={selection.some((item) => item.kind === "sensor" && item.id === sensor.id)}
+        />
+      ))}
+    </>
+  );
+}

@@ -1,0 +1,59 @@
+import type { ReactNode } from "react";
+import { numberText, readNumber } from "~/sheet/read-number";
+import { CommitField } from "./CommitField";
+
+interface Props {
+  label: ReactNode;
+  /** In SI units; null shows an empty field. */
+  value: number | null;
+  onChange: (value: number) => void;
+  /** Given where the field may be emptied. */
+  onEmpty?: (() => void) | undefined;
+  unit?: string | undefined;
+  /** How many of the shown unit make one SI unit: 1000 for mm. */
+  perUnit?: number | undefined;
+  least?: number | undefined;
+  above?: number | undefined;
+  most?: number | undefined;
+  hint?: ReactNode;
+  disabled?: boolean | undefined;
+  placeholder?: string | undefined;
+}
+
+/** What the bounds say, in the unit shown. */
+function boundWords({ least, above, most, perUnit = 1, unit = "" }: Props): string {
+  const words = [
+    ...(above !== undefined ? [`above ${numberText(above * perUnit)}`] : []),
+    ...(least !== undefined ? [`from ${numberText(least * perUnit)}`] : []),
+    ...(most !== undefined ? [`up to ${numberText(most * perUnit)}`] : []),
+  ];
+  return words.length === 0 ? "" : ` ${words.join(" ")} ${unit}`.trimEnd();
+}
+
+export function NumberField(props: Props) {
+  const { value, onChange, onEmpty, perUnit = 1, least, above, most, ...field } = props;
+  const commit = (text: string): string | null => {
+    if (text.trim() === "" && onEmpty) {
+      onEmpty();
+      return null;
+    }
+    const typed = readNumber(text);
+    if (typed === null) return `Type a number${boundWords(props)}.`;
+    const si = typed / perUnit;
+    const refused =
+      (least !== undefined && si < least) ||
+      (above !== undefined && si <= above) ||
+      (most !== undefined && si > most);
+    if (refused) return `Type a number${boundWords(props)}.`;
+    onChange(Number(si.toPrecision(12)));
+    return null;
+  };
+  return (
+    <CommitField
+      {...field}
+      inputMode="decimal"
+      value={value === null ? "" : numberText(value * perUnit)}
+      onCommit={commit}
+    />
+  );
+}

@@ -1,0 +1,83 @@
+import { Choice } from "../inputs/Choice";
+import { NumberField } from "../inputs/NumberField";
+import {
+  useDocument,
+  useSelection,
+  useSheet,
+  useSheetStore,
+  type MapQuantity,
+  type MapSettings,
+} from "../store";
+import { useMapLimit, valueText } from "./use-field-map";
+import { limitValue } from "~/domain/plan-document/sensor";
+
+const quantities: readonly { value: MapQuantity | "off"; label: string }[] = [
+  { value: "off", label: "no map" },
+  { value: "static", label: "static field (DC)" },
+  { value: "alternating", label: "alternating field (AC, rms)" },
+  { value: "heading", label: "heading error" },
+];
+
+/** What the contour lines on the drawing show. */
+export function MapPanel() {
+  const store = useSheetStore();
+  const document = useDocument();
+  const selection = useSelection();
+  const { settings, problem } = useSheet((state) => state.map);
+  const limit = useMapLimit();
+  const [selected] = selection.filter((item) => item.kind === "sensor");
+  const selectedHeightM = document.sensors.find(({ id }) => id === selected?.id)?.position[2];
+  const set = (next: MapSettings | null) =>
+    store.update({
+      map: { settings: next, mapped: next === null ? null : store.get().map.mapped, problem: null },
+    });
+  const noEarth = document.earthField === null;
+  return (
+    <div className="grid gap-3">
+      <Choice
+        label="Field map"
+        value={settings?.quantity ?? "off"}
+        options={noEarth ? quantities.filter(({ value }) => value !== "heading") : quantities}
+        hint={noEarth ? "A heading error needs the Earth’s field: state it under Plan." : undefined}
+        onChange={(quantity) =>
+          set(
+            quantity === "off"
+              ? null
+              : { loadCaseId: null, heightM: selectedHeightM ?? 1.1, ...settings, quantity },
+          )
+        }
+      />
+      {settings !== null && (
+        <>
+          <NumberField
+            label="Height of the map"
+            unit="m"
+            value={settings.heightM}
+            onChange={(heightM) => set({ ...settings, heightM })}
+          />
+          {document.loadCases.length > 0 && (
+            <Choice
+              label="Load case"
+              value={settings.loadCaseId ?? ""}
+              options={[
+                { value: "", label: "as entered" },
+                ...document.loadCases.map(({ id, name }) => ({ value: id, label: name })),
+              ]}
+              onChange={(id) => set({ ...settings, loadCaseId: id === "" ? null : id })}
+            />
+          )}
+          <p className="text-xs text-muted">
+            {limit === null
+              ? "Select a sensor with a limit of this kind to see where that limit is exceeded."
+              : `The heavy line is the selected sensor’s limit, ${valueText(limitValue(limit), settings.quantity)}; the hatched side is to be kept out of.`}
+          </p>
+          {problem !== null && (
+            <p className="message message-undecided" role="status">
+              {problem}
+            </p>
+          )}
+        </>
+      )}
+    </div>
+  );
+}
