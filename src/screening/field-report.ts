@@ -1,0 +1,45 @@
+import type { Finding } from "~/domain/screening-result";
+import type { LimitJudging } from "./judging";
+import type { CaseFactors } from "./load-cases";
+import { ellipseAt } from "./measures/ellipse";
+import { sumGroups } from "./sensor-field";
+
+type Triple = [number, number, number];
+
+/**
+ * Total field at the sensor in one load case, all frequencies, the Earth's field and backgrounds left out, and the ellipse of
+ * its alternating part over the frequencies of the limit (all of them where the limit judges none).
+ */
+export function fieldReport(judging: LimitJudging, factors: CaseFactors): Pick<Finding, "field" | "ellipse"> {
+  const { plan, field } = judging.at;
+  const { groups: table } = plan.frequencies;
+  const groups = new Float64Array(6 * table.length);
+  const everything = plan.components.map(() => true);
+  sumGroups(plan, field.phasors, 6, factors.items, everything, groups);
+  const triple = (at: number): Triple => [
+    groups[at] as number,
+    groups[at + 1] as number,
+    groups[at + 2] as number,
+  ];
+  const alternating = table.flatMap(({ source, frequencyHz, classIndex }, index) =>
+    classIndex === 0 ? [] : [{ source, frequencyHz, re: triple(6 * index), im: triple(6 * index + 3) }],
+  );
+  return { field: { static: triple(0), alternating }, ellipse: ellipseOver(judging, groups) };
+}
+
+/** Over sources and frequencies: rms resultants root-sum-squared, major axes and peak-to-peak values added (upper bounds). */
+function ellipseOver(judging: LimitJudging, groups: Float64Array): Finding["ellipse"] {
+  const { groups: table } = judging.at.plan.frequencies;
+  const judged = table.map(({ frequencyHz }) => judging.measure.includes(frequencyHz));
+  const anyJudged = table.some(({ classIndex }, index) => classIndex > 0 && judged[index]);
+  const ellipses = table.flatMap(({ classIndex }, index) =>
+    classIndex > 0 && (!anyJudged || judged[index]) ? [ellipseAt(groups, 6 * index)] : [],
+  );
+  if (ellipses.length === 0) return null;
+  const majorAxisT = ellipses.reduce((sum, { major }) => sum + major, 0);
+  return {
+    rmsT: Math.sqrt(ellipses.reduce((sum, { rms }) => sum + rms * rms, 0)),
+    majorAxisT,
+    peakToPeakT: 2 * Math.SQRT2 * majorAxisT,
+  };
+}

@@ -1,0 +1,87 @@
+import type { PlanDocument } from "~/domain/plan-document/plan-document";
+import type { Sensor } from "~/domain/plan-document/sensor";
+import { worstVerdict, type ScreeningResult, type SensorResult } from "~/domain/screening-result";
+import { resolveDefaults } from "~/domain/plan-document/resolved";
+import { circulationError } from "./checks/circulation-check";
+import { openEnds, openEndText } from "./checks/open-ends";
+import { PositionChecks } from "./checks/position-warnings";
+import { compilePlan, type CompiledPlan, type WaitingCircuit } from "./compile";
+import { earthWarnings, planEarth, type PlanEarth } from "./earth";
+import { ENGINE_VERSION } from "./engine-version";
+import { hashOfResolved } from "./input-hash";
+import { judgeLimit } from "./judge-limit";
+import { LimitJudging, SensorJudging } from "./judging";
+import { leftOut } from "./left-out";
+import { notYetComputed } from "./not-yet-computed";
+import { RefusedDocumentError } from "./refusal";
+import { uncertaintyOf } from "./uncertainty/uncertainty";
+import { cappedVerdict } from "./verdict";
+
+export interface ScreenOptions {
+  /** Looked at between sensors; when aborted, `screen` throws the signal's reason. */
+  signal?: AbortSignal;
+  /** Called between sensors with how many of how many are done. */
+  onProgress?: (done: number, total: number) => void;
+}
+
+/**
+ * Screens a document: every limit of every sensor in every load case. Pure: equal documents give equal results, byte for byte.
+ * Throws RefusedDocumentError for documents that parse and yet cannot be computed.
+ */
+export function screen(document: PlanDocument, options: ScreenOptions = {}): ScreeningResult {
+  const refused = notYetComputed(document);
+  if (refused.length > 0) throw new RefusedDocumentError(refused);
+  const resolved = resolveDefaults(document);
+  const earth = planEarth(resolved);
+  const plan = compilePlan(resolved);
+  const hash = hashOfResolved(resolved);
+  const waiting = plan.waiting.length > 0;
+  const positions = new PositionChecks(plan);
+  const warnings = [...plan.waiting.map(waitingText), ...plan.warnings, ...earthWarnings(earth)];
+
+  const sensors = resolved.sensors.map((sensor, index) => {
+    options.signal?.throwIfAborted();
+    options.onProgress?.(index, resolved.sensors.length);
+    const position = positions.check(sensor);
+    warnings.push(...position.warnings);
+    return screenSensor(plan, sensor, earth, waiting || position.capped);
+  });
+  options.onProgress?.(sensors.length, sensors.length);
+
+  const ends = openEnds(plan);
+  return {
+    format: "stillneedle-result",
+    version: 1,
+    inputHash: hash,
+    engineVersion: ENGINE_VERSION,
+    verdict: cappedVerdict(worstVerdict(sensors.map(({ verdict }) => verdict)), waiting),
+    earthField: earth?.elements ?? null,
+    sensors,
+    checks: {
+      circulationError: circulationError(plan),
+      openEnds: ends,
+      warnings: [...warnings, ...ends.map(openEndText)],
+    },
+    leftOut: leftOut(resolved),
+  };
+}
+
+function screenSensor(
+  plan: CompiledPlan,
+  sensor: Sensor,
+  earth: PlanEarth | null,
+  capped: boolean,
+): SensorResult {
+  const judging = new SensorJudging(plan, sensor, earth);
+  const findings = sensor.limits.map((limit) =>
+    judgeLimit(new LimitJudging(judging, limit), capped, uncertaintyOf),
+  );
+  return { id: sensor.id, verdict: worstVerdict(findings.map(({ verdict }) => verdict)), findings };
+}
+
+function waitingText({ id, name, missing }: WaitingCircuit): string {
+  const what = missing
+    .map((part) => (part === "path" ? "is not traced" : "has no current yet"))
+    .join(" and ");
+  return `Circuit "${name}" (${id}) ${what}: no verdict is better than undecided.`;
+}

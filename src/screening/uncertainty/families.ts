@@ -1,0 +1,56 @@
+import type { Component } from "../compile";
+
+/**
+ * Inputs of one kind that are uncertain, by the components they move. `vectors` holds per component (stride numbers, load
+ * factor 1) the change of its phasors by one standard uncertainty; components with the same key move together; −1: none.
+ */
+export interface InputFamily {
+  vectors: Float64Array;
+  stride: 6 | 18;
+  keys: Int32Array;
+  keyCount: number;
+  /** Set where the sensor itself moves, along x, y or z. */
+  axis?: 0 | 1 | 2;
+}
+
+/** Rectangular distribution of half-width a: u = a/√3 (JCGM 100, 4.3.7). */
+export const RECTANGULAR = 1 / Math.sqrt(3);
+
+/** Numbers the distinct keys of components in their order; null: not uncertain. */
+export function keyed(
+  components: readonly Component[],
+  keyOf: (component: Component) => string | null,
+): { keys: Int32Array; keyCount: number } {
+  const numbers = new Map<string, number>();
+  const keys = Int32Array.from(components, (component) => {
+    const key = keyOf(component);
+    if (key === null) return -1;
+    const known = numbers.get(key);
+    if (known !== undefined) return known;
+    numbers.set(key, numbers.size);
+    return numbers.size - 1;
+  });
+  return { keys, keyCount: numbers.size };
+}
+
+/** Changes of the measured value by one standard uncertainty of each key: Σ over its components of factor · ⟨slope, vector⟩. */
+export function effectsOf(
+  family: InputFamily,
+  components: readonly Component[],
+  factors: Float64Array,
+  included: readonly boolean[],
+  slope: Float64Array,
+): Float64Array {
+  const effects = new Float64Array(family.keyCount);
+  const { vectors, stride, keys } = family;
+  components.forEach(({ item, group }, index) => {
+    const key = keys[index] as number;
+    if (key < 0 || !included[index]) return;
+    let sum = 0;
+    for (let i = 0; i < stride; i++) {
+      sum += (vectors[stride * index + i] as number) * (slope[stride * group + i] as number);
+    }
+    effects[key] = (effects[key] as number) + (factors[item] as number) * sum;
+  });
+  return effects;
+}
