@@ -1,0 +1,106 @@
+import { useMemo } from "react";
+import { fromSourcesDrawn } from "~/domain/verdict-words";
+import { entriesOf, sourceKeys, sourcesDrawn } from "~/sheet/ledger";
+import type { PlanDocument } from "~/domain/plan-document/plan-document";
+import type { Live } from "~/components/sheet/store";
+import { LedgerEntry } from "./LedgerEntry";
+
+interface Props {
+  document: PlanDocument;
+  live: Live;
+  litId: string | null;
+  onLight: (circuitId: string | null) => void;
+  selectedSensorId: string | null;
+  onSelect: (sensorId: string) => void;
+}
+
+/** Every sensor worst first, with what it has of its budget and who spends it. */
+export function Ledger({ document, live, litId, onLight, selectedSensorId, onSelect }: Props) {
+  const keys = useMemo(() => sourceKeys(document), [document]);
+  const entries = useMemo(
+    () => (live.kind === "screened" ? entriesOf(document, live.result) : []),
+    [document, live],
+  );
+  const unjudged = document.sensors.filter(({ id }) => !entries.some(({ sensorId }) => sensorId === id));
+  return (
+    <section aria-labelledby="ledger-title">
+      <h2 id="ledger-title" className="text-base">
+        Ledger
+      </h2>
+      <p className="text-xs text-muted" data-testid="ledger-basis">
+        {document.sensors.length === 0
+          ? "No sensor is placed yet."
+          : `Worst first, ${fromSourcesDrawn(sourcesDrawn(document))}.`}
+      </p>
+      <LedgerMessages live={live} hasSensors={document.sensors.length > 0} />
+      <ol className="mt-2 grid gap-1">
+        {entries.map((entry) => (
+          <LedgerEntry
+            key={entry.sensorId}
+            entry={entry}
+            document={document}
+            keys={keys}
+            litId={litId}
+            onLight={onLight}
+            selected={entry.sensorId === selectedSensorId}
+            onSelect={onSelect}
+          />
+        ))}
+      </ol>
+      {live.kind === "screened" && unjudged.length > 0 && (
+        <p className="mt-2 text-sm text-muted">
+          Not judged yet: {unjudged.map(({ name }) => name).join(", ")}.
+        </p>
+      )}
+      {live.kind === "screened" && <Checks live={live} />}
+    </section>
+  );
+}
+
+function LedgerMessages({ live, hasSensors }: { live: Live; hasSensors: boolean }) {
+  if (live.kind === "refused") {
+    return (
+      <div className="message message-undecided mt-2" role="status">
+        <p>{live.message}</p>
+        <ul className="mt-1 list-disc pl-5">
+          {live.faults.slice(0, 5).map(({ path, message }) => (
+            <li key={`${path}: ${message}`}>
+              <span className="font-semibold">{path}</span>: {message}
+            </li>
+          ))}
+        </ul>
+      </div>
+    );
+  }
+  return live.kind === "waiting" && hasSensors ? (
+    <p className="mt-2 text-sm text-muted" role="status">
+      Screening…
+    </p>
+  ) : null;
+}
+
+function Checks({ live }: { live: Extract<Live, { kind: "screened" }> }) {
+  const { openEnds, warnings } = live.result.checks;
+  if (openEnds.length === 0 && warnings.length === 0) return null;
+  return (
+    <details className="mt-3 text-sm">
+      <summary className="text-muted">
+        {openEnds.length + warnings.length === 1
+          ? "1 remark"
+          : `${openEnds.length + warnings.length} remarks`}{" "}
+        of the engine
+      </summary>
+      <ul className="mt-1 list-disc pl-5">
+        {openEnds.map(({ at, currentA }) => (
+          <li key={at.join()}>
+            {Number(currentA.toPrecision(3))} A leave at x {at[0].toFixed(2)}, y {at[1].toFixed(2)}, z{" "}
+            {at[2].toFixed(2)} m and no way back is drawn.
+          </li>
+        ))}
+        {warnings.map((warning) => (
+          <li key={warning}>{warning}</li>
+        ))}
+      </ul>
+    </details>
+  );
+}
