@@ -1,7 +1,6 @@
 import { cautions } from "~/domain/cautions";
 import {
   formatBudget,
-  formatCurrent,
   formatLength,
   formatLimit,
   formatQuantity,
@@ -16,7 +15,7 @@ import { countVerdicts, loadCaseName, type Position, positionsWorstFirst } from 
 import type { ScreeningResult, Verdict } from "~/domain/screening-result";
 import { drawnSourceCount, numberedSources, sourceFinder } from "~/domain/sources";
 import { counted, fromSourcesDrawn, verdictSentence } from "~/domain/verdict-words";
-import { waitingCircuits, waitingWords } from "~/domain/waiting-circuits";
+import { type WaitingCircuit, waitingCircuits, waitingWords } from "~/domain/waiting-circuits";
 import { waysToClear } from "~/domain/ways-to-clear";
 
 export interface NoticeSource {
@@ -107,7 +106,7 @@ export function noticeContent(source: NoticeSource): NoticeContent {
         ? [`${counted(waiting.length - most.waiting, "more circuit", "more circuits")}; the page lists them`]
         : []),
     ],
-    checks: checkWords(result, nameOf),
+    checks: checkWords(result, waiting),
     leftOut: result.leftOut.map(oneLine),
     cautions,
     resultUrl: source.resultUrl,
@@ -168,14 +167,13 @@ function withinWords({ sensor, governing }: Position): string {
   return `${sensorName(sensor)}${used}`;
 }
 
-function checkWords({ checks }: ScreeningResult, nameOf: (id: string) => string): string[] {
-  const lines = [
-    ...checks.openEnds.map(
-      ({ at, currentA, circuitIds }) =>
-        `${formatCurrent(currentA)} leave at ${placeWords(at)} and no way back is drawn (${circuitIds.map(nameOf).join(", ")})`,
-    ),
-    ...checks.warnings.map(oneLine),
-  ];
+/** The engine's warnings but for the circuits that wait, which stand in a list of their own. */
+function checkWords({ checks }: ScreeningResult, waiting: readonly WaitingCircuit[]): string[] {
+  const lines = checks.warnings
+    .filter(
+      (line) => !waiting.some(({ circuit }) => line.startsWith(`Circuit "${circuit.name}" (${circuit.id}) `)),
+    )
+    .map(oneLine);
   const more = lines.length - most.checks;
   return more > 0 ? [...lines.slice(0, most.checks), `${String(more)} more; the page lists them`] : lines;
 }

@@ -1,0 +1,92 @@
+import { z } from "zod";
+import { Refusal } from "~/domain/errors";
+import type { Member } from "~/domain/permissions";
+import type { PlanDocument } from "~/domain/plan-document/plan-document";
+import type { ScreeningResult, Verdict } from "~/domain/screening-result";
+import { recordActivity } from "../activity/record";
+import { db } from "../db/client";
+import { type FindingRow, insertFindings } from "../db/queries/findings";
+import { findPlanDocument } from "../db/queries/plan-documents";
+import type { PlanRow } from "../db/queries/plans";
+import { insertScreening } from "../db/queries/screenings";
+import { runScreening } from "./run-screening";
+
+/** The version of the working copy that the person has before them. */
+export const screeningInput = z.strictObject({ version: z.int().min(1) });
+
+export interface StoredScreening {
+  id: string;
+  url: string;
+  verdict: Verdict;
+}
+
+/**
+ * Screens a plan's working copy as it is at `version`, and stores document, result and findings.
+ * @param signal aborted when nobody waits for the answer any more; nothing is stored then
+ * @throws Refusal state.conflict where the working copy has moved on; document.refused with faults; screening.timed-out
+ */
+export async function screenPlan(
+  member: Member,
+  plan: PlanRow,
+  version: number,
+  signal?: AbortSignal,
+): Promise<StoredScreening> {
+  const { organisationId } = plan;
+  const saved = await findPlanDocument(db(), organisationId, plan.id);
+  if (saved === undefined) throw new Error("A plan has no document.");
+  if (saved.version !== version)
+    throw new Refusal(
+      "state.conflict",
+      `The plan is at version ${String(saved.version)} now. Load it, look at what has changed, and screen it again.`,
+      { detail: { version: saved.version } },
+    );
+  // Valid since it was saved; the engine says what it does not compute.
+  const document = JSON.parse(saved.document) as PlanDocument;
+  const { result, text } = await runScreening(document, signal);
+  const id = crypto.randomUUID();
+  await db().transaction(async (tx) => {
+    await insertScreening(tx, {
+      id,
+      organisationId,
+      planId: plan.id,
+      documentVersion: version,
+      inputHash: result.inputHash,
+      engineVersion: result.engineVersion,
+      verdict: result.verdict,
+      document: saved.document,
+      result: text,
+      screenedBy: member.userId,
+      screenedAt: new Date(),
+    });
+    await insertFindings(tx, findingRows(id, document, result));
+    await recordActivity(tx, {
+      organisationId,
+      actorId: member.userId,
+      event: "plan.screened",
+      subjectKind: "screening",
+      subjectId: id,
+      detail: { planId: plan.id, version, verdict: result.verdict },
+    });
+  });
+  return { id, url: `/plans/${plan.id}/screenings/${id}`, verdict: result.verdict };
+}
+
+function findingRows(screeningId: string, document: PlanDocument, result: ScreeningResult): FindingRow[] {
+  const names = new Map(document.sensors.map(({ id, name }) => [id, name]));
+  return result.sensors.flatMap((sensor) =>
+    sensor.findings.map((finding) => ({
+      screeningId,
+      sensorId: sensor.id,
+      limitId: finding.limitId,
+      sensorName: names.get(sensor.id) ?? sensor.id,
+      kind: finding.kind,
+      limitValue: finding.limit,
+      value: finding.value,
+      expandedUncertainty: finding.expandedUncertainty,
+      unit: finding.unit,
+      budgetUsed: finding.budgetUsed,
+      verdict: finding.verdict,
+      loadCaseId: finding.loadCaseId,
+    })),
+  );
+}

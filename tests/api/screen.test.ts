@@ -1,0 +1,135 @@
+import { spawnSync } from "node:child_process";
+import { mkdtempSync, rmSync, writeFileSync } from "node:fs";
+import { request } from "node:http";
+import type { AddressInfo } from "node:net";
+import { tmpdir } from "node:os";
+import { join } from "node:path";
+import { afterAll, beforeAll, describe, expect, it, vi } from "vitest";
+import { nodeEntry } from "../../scripts/services/app";
+import { parsePlanDocument } from "../../src/domain/plan-document/parse";
+import { db } from "../../src/server/db/client";
+import { leaveStatelessPlace, takeStatelessPlace } from "../../src/server/db/queries/screenings";
+import { closeScreeningPool } from "../../src/server/screenings/pool";
+import { runScreening } from "../../src/server/screenings/run-screening";
+import { as } from "../fixtures/api-client";
+import { newMember, newOrganisation, type SignedInMember } from "../fixtures/organisation";
+import { heavyPlan, screenablePlan } from "../fixtures/screenable-plan";
+import { startTestApp, type TestApp } from "../support/test-app";
+
+let app: TestApp;
+let organisation: { id: string; name: string };
+let member: SignedInMember;
+const heavy = JSON.stringify(heavyPlan());
+
+beforeAll(async () => {
+  app = await startTestApp();
+  organisation = await newOrganisation("Stateless Office");
+  member = await newMember(organisation, ["installer"]);
+});
+afterAll(async () => {
+  await closeScreeningPool();
+  await app.close();
+});
+
+const screen = (body: unknown, who = member) => as(app, who)("post", "/api/screen").send(body as object);
+
+const place = (userId: string) => {
+  const now = new Date();
+  return { userId, runId: crypto.randomUUID(), now, expiresAt: new Date(now.getTime() + 60_000) };
+};
+
+/** Whether the person's place is free, without keeping it. */
+async function isFree(userId: string): Promise<boolean> {
+  const trial = place(userId);
+  const taken = await takeStatelessPlace(db(), trial);
+  if (taken) await leaveStatelessPlace(db(), userId, trial.runId);
+  return taken;
+}
+
+describe("POST /api/screen", () => {
+  it("answers with the bytes that the command prints", async () => {
+    const folder = mkdtempSync(join(tmpdir(), "screen-"));
+    try {
+      const file = join(folder, "plan.json");
+      writeFileSync(file, JSON.stringify(screenablePlan()));
+      const printed = spawnSync(process.execPath, [nodeEntry("screen"), file], { encoding: "utf8" });
+      expect([printed.status, printed.stderr]).toEqual([3, ""]);
+      const answer = await screen(screenablePlan());
+      expect([answer.status, answer.text]).toEqual([200, printed.stdout]);
+      expect(answer.headers["content-type"]).toBe("application/json; charset=utf-8");
+    } finally {
+      rmSync(folder, { recursive: true });
+    }
+  });
+
+  it("refuses a document with every fault and its path", async () => {
+    const refused = await screen({ ...screenablePlan(), colour: "red", sensors: [], circuits: "none" });
+    expect([refused.status, refused.body.error.code]).toEqual([422, "document.refused"]);
+    expect(refused.body.error.faults.map(({ path }: { path: string }) => path).sort()).toEqual([
+      "circuits",
+      "colour",
+    ]);
+    expect(await isFree(member.userId)).toBe(true);
+  });
+
+  it("needs an account, JSON, and at most 20 MB", async () => {
+    const path = "/api/screen";
+    const anonymous = { ...member, cookie: "session=none" };
+    expect((await screen(screenablePlan(), anonymous)).status).toBe(401);
+    const malformed = as(app, member)("post", path).set("Content-Type", "application/json").send("{");
+    expect((await malformed).status).toBe(400);
+    const huge = as(app, member)("post", path).set("Content-Type", "application/json");
+    // Not JSON either: its size is judged before anything is read of it.
+    expect((await huge.send(`{${" ".repeat(20_000_001)}`)).status).toBe(413);
+  });
+
+  it("runs one at a time for each person, whichever process has the other one", async () => {
+    const other = await newMember(organisation, ["planner"]);
+    const elsewhere = place(member.userId);
+    expect(await takeStatelessPlace(db(), elsewhere)).toBe(true);
+    const busy = await screen(screenablePlan());
+    expect([busy.status, busy.body.error.code, busy.headers["retry-after"]]).toEqual([
+      429,
+      "screening.busy",
+      "5",
+    ]);
+    expect((await screen(screenablePlan(), other)).status).toBe(200);
+    await leaveStatelessPlace(db(), member.userId, elsewhere.runId);
+    expect((await screen(screenablePlan())).status).toBe(200);
+  });
+
+  it("frees the place of a process that ended, once its time is over", async () => {
+    const dead = { ...place(member.userId), expiresAt: new Date(Date.now() - 1) };
+    expect(await takeStatelessPlace(db(), dead)).toBe(true);
+    const next = place(member.userId);
+    expect(await takeStatelessPlace(db(), next)).toBe(true);
+    await leaveStatelessPlace(db(), member.userId, dead.runId);
+    expect(await isFree(member.userId)).toBe(false);
+    await leaveStatelessPlace(db(), member.userId, next.runId);
+  });
+
+  it("gives up when the caller is gone, and frees their place", async () => {
+    const { port } = app.server.address() as AddressInfo;
+    const call = request({
+      port,
+      host: "127.0.0.1",
+      path: "/api/screen",
+      method: "POST",
+      headers: { "content-type": "application/json", cookie: member.cookie, origin: app.origin },
+    });
+    call.on("error", () => {});
+    call.end(heavy);
+    await vi.waitFor(async () => expect(await isFree(member.userId)).toBe(false), { timeout: 20_000 });
+    call.destroy();
+    await vi.waitFor(async () => expect(await isFree(member.userId)).toBe(true), { timeout: 5_000 });
+  });
+
+  it("stops what takes too long", async () => {
+    const parsed = parsePlanDocument(JSON.parse(heavy));
+    if (!parsed.ok) throw new Error("The heavy plan is refused.");
+    await expect(runScreening(parsed.document, undefined, 50)).rejects.toMatchObject({
+      code: "screening.timed-out",
+      status: 503,
+    });
+  });
+});
