@@ -21,13 +21,17 @@ interface Props {
   /** Address of the uploaded image that the document's drawing places. */
   imageUrl?: string | undefined;
   label: string;
+  /** User units across: fewer make lettering larger beside the drawing. */
+  width?: number | undefined;
 }
 
 const markSize = 30;
 
 /** The plan as it was screened: conductors in copper with their numbers, sensors as needle marks. */
-export function PlanFigure({ document, result, imageUrl, label }: Props) {
-  const frame = figureFrame(document);
+export function PlanFigure({ document, result, imageUrl, label, width }: Props) {
+  const frame = figureFrame(document, width);
+  // Lettering stays about 11 px high; on a phone the drawing scrolls sideways instead.
+  const narrow = frame.width <= 720;
   const lines = figureLines(document, frame);
   const find = sourceFinder(numberedSources(document));
   const positions = positionsWorstFirst(document, result);
@@ -40,7 +44,7 @@ export function PlanFigure({ document, result, imageUrl, label }: Props) {
     <svg
       role="img"
       aria-label={label}
-      className="block h-auto w-full min-w-[44rem] text-[13px]"
+      className={`block h-auto w-full text-[13px] ${narrow ? "min-w-[38rem]" : "min-w-[52rem]"}`}
       viewBox={`0 0 ${frame.width.toFixed(0)} ${frame.height.toFixed(0)}`}
     >
       {imageUrl !== undefined && <SheetImage document={document} frame={frame} url={imageUrl} />}

@@ -22,9 +22,9 @@ export interface FigureLine {
   middleAngleDeg: number;
 }
 
-const figureWidth = 960;
+/** Width of a figure that has the page to itself. */
+const fullWidth = 960;
 const margin = 56;
-const largestHeight = 720;
 
 /** Corners of the uploaded image in the plan, counter-clockwise from its upper left; empty without one. */
 export function imageCorners({ sheet }: PlanDocument["drawing"]): FigurePoint[] {
@@ -44,8 +44,8 @@ export function imageCorners({ sheet }: PlanDocument["drawing"]): FigurePoint[] 
   });
 }
 
-/** A frame that holds everything drawn, 960 units wide or 720 high, whichever is reached first. */
-export function figureFrame(document: PlanDocument): FigureFrame {
+/** A frame that holds everything drawn, `figureWidth` units wide or three quarters of that high, whichever is reached first. */
+export function figureFrame(document: PlanDocument, figureWidth = fullWidth): FigureFrame {
   const points: (readonly number[])[] = [
     ...document.sensors.map(({ position }) => position),
     ...document.equipment.map(({ centre }) => centre),
@@ -62,7 +62,10 @@ export function figureFrame(document: PlanDocument): FigureFrame {
     points.length === 0 ? [0, 10, 0, 6] : [least(xs), most(xs), least(ys), most(ys)];
   const widthM = Math.max(right - left, 1);
   const heightM = Math.max(top - bottom, 1);
-  const unitsPerM = Math.min((figureWidth - 2 * margin) / widthM, (largestHeight - 2 * margin) / heightM);
+  const unitsPerM = Math.min(
+    (figureWidth - 2 * margin) / widthM,
+    (0.75 * figureWidth - 2 * margin) / heightM,
+  );
   return {
     width: widthM * unitsPerM + 2 * margin,
     height: heightM * unitsPerM + 2 * margin,
