@@ -30,7 +30,7 @@ export const findingSchema = z.strictObject({
   loadCaseId: z.string().nullable(),
   /** Total at the sensor in the governing load case, plan axes, T, rms; for swing the difference of its two cases. */
   field: z.strictObject({ static: vector, alternating: z.array(alternatingField) }),
-  /** Null where nothing alternates. */
+  /** Null for limits that judge no alternating field, and where nothing alternates. */
   ellipse: ellipse.nullable(),
   /** Shares of the value by circuit, equipment or "background"; they sum to 1 and may be negative. */
   contributions: z.array(z.strictObject({ id: z.string(), part: z.number() })),

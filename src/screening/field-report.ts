@@ -7,8 +7,8 @@ import { sumGroups } from "./sensor-field";
 type Triple = [number, number, number];
 
 /**
- * Total field at the sensor in one load case, all frequencies, the Earth's field and backgrounds left out, and the ellipse of
- * its alternating part over the frequencies of the limit (all of them where the limit judges none).
+ * Total field at the sensor in one load case, all frequencies, the Earth's field and backgrounds left out, and for limits
+ * on alternating fields the ellipse over the frequencies that they judge. A swing is a difference of DC states: nothing alternates in it.
  */
 export function fieldReport(judging: LimitJudging, factors: CaseFactors): Pick<Finding, "field" | "ellipse"> {
   const { plan, field } = judging.at;
@@ -22,18 +22,17 @@ export function fieldReport(judging: LimitJudging, factors: CaseFactors): Pick<F
     groups[at + 2] as number,
   ];
   const alternating = table.flatMap(({ source, frequencyHz, classIndex }, index) =>
-    classIndex === 0 ? [] : [{ source, frequencyHz, re: triple(6 * index), im: triple(6 * index + 3) }],
+    classIndex === 0 || judging.limit.kind === "swing"
+      ? []
+      : [{ source, frequencyHz, re: triple(6 * index), im: triple(6 * index + 3) }],
   );
   return { field: { static: triple(0), alternating }, ellipse: ellipseOver(judging, groups) };
 }
 
 /** Over sources and frequencies: rms resultants root-sum-squared, major axes and peak-to-peak values added (upper bounds). */
 function ellipseOver(judging: LimitJudging, groups: Float64Array): Finding["ellipse"] {
-  const { groups: table } = judging.at.plan.frequencies;
-  const judged = table.map(({ frequencyHz }) => judging.measure.includes(frequencyHz));
-  const anyJudged = table.some(({ classIndex }, index) => classIndex > 0 && judged[index]);
-  const ellipses = table.flatMap(({ classIndex }, index) =>
-    classIndex > 0 && (!anyJudged || judged[index]) ? [ellipseAt(groups, 6 * index)] : [],
+  const ellipses = judging.at.plan.frequencies.groups.flatMap(({ classIndex, frequencyHz }, index) =>
+    classIndex > 0 && judging.measure.includes(frequencyHz) ? [ellipseAt(groups, 6 * index)] : [],
   );
   if (ellipses.length === 0) return null;
   const majorAxisT = ellipses.reduce((sum, { major }) => sum + major, 0);

@@ -14,21 +14,20 @@ import { LimitJudging, SensorJudging } from "./judging";
 import { leftOut } from "./left-out";
 import { notYetComputed } from "./not-yet-computed";
 import { RefusedDocumentError } from "./refusal";
+import { runSteps, type ScreenOptions, type Steps } from "./steps";
 import { uncertaintyOf } from "./uncertainty/uncertainty";
 import { cappedVerdict } from "./verdict";
-
-export interface ScreenOptions {
-  /** Looked at between sensors; when aborted, `screen` throws the signal's reason. */
-  signal?: AbortSignal;
-  /** Called between sensors with how many of how many are done. */
-  onProgress?: (done: number, total: number) => void;
-}
 
 /**
  * Screens a document: every limit of every sensor in every load case. Pure: equal documents give equal results, byte for byte.
  * Throws RefusedDocumentError for documents that parse and yet cannot be computed.
  */
 export function screen(document: PlanDocument, options: ScreenOptions = {}): ScreeningResult {
+  return runSteps(screenSteps(document), options);
+}
+
+/** The same in steps, one a sensor, so that a worker can look at its messages between them. */
+export function* screenSteps(document: PlanDocument): Steps<ScreeningResult> {
   const refused = notYetComputed(document);
   if (refused.length > 0) throw new RefusedDocumentError(refused);
   const resolved = resolveDefaults(document);
@@ -39,14 +38,14 @@ export function screen(document: PlanDocument, options: ScreenOptions = {}): Scr
   const positions = new PositionChecks(plan);
   const warnings = [...plan.waiting.map(waitingText), ...plan.warnings, ...earthWarnings(earth)];
 
-  const sensors = resolved.sensors.map((sensor, index) => {
-    options.signal?.throwIfAborted();
-    options.onProgress?.(index, resolved.sensors.length);
+  const sensors: SensorResult[] = [];
+  for (const sensor of resolved.sensors) {
+    yield { done: sensors.length, total: resolved.sensors.length };
     const position = positions.check(sensor);
     warnings.push(...position.warnings);
-    return screenSensor(plan, sensor, earth, waiting || position.capped);
-  });
-  options.onProgress?.(sensors.length, sensors.length);
+    sensors.push(screenSensor(plan, sensor, earth, waiting || position.capped));
+  }
+  yield { done: sensors.length, total: sensors.length };
 
   const ends = openEnds(plan);
   return {

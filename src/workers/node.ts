@@ -1,0 +1,48 @@
+import { fileURLToPath } from "node:url";
+import { Piscina } from "piscina";
+import type { PlanDocument } from "~/domain/plan-document/plan-document";
+import type { ScreeningResult } from "~/domain/screening-result";
+import type { Job } from "./jobs";
+import { ScreeningFailedError, type FieldMap, type FieldMapRequest, type WorkerResponse } from "./protocol";
+
+export interface ScreeningPool {
+  /** Rejects with ScreeningFailedError; on abort the thread is ended and an AbortError comes back. */
+  screen(document: PlanDocument, signal?: AbortSignal): Promise<ScreeningResult>;
+  map(document: PlanDocument, request: FieldMapRequest, signal?: AbortSignal): Promise<FieldMap>;
+  close(): Promise<void>;
+}
+
+export interface ScreeningPoolOptions {
+  /** Threads at most; without it one a processor. */
+  maxThreads?: number;
+}
+
+/** A pool of threads that run `workerFile` (the bundled `screening-worker.mjs`). */
+export function createScreeningPool(
+  workerFile: URL | string,
+  { maxThreads }: ScreeningPoolOptions = {},
+): ScreeningPool {
+  const pool = new Piscina<Job, WorkerResponse>({
+    filename: typeof workerFile === "string" ? workerFile : fileURLToPath(workerFile),
+    minThreads: 1,
+    ...(maxThreads ? { maxThreads } : {}),
+  });
+  const run = async (job: Job, signal: AbortSignal | undefined): Promise<WorkerResponse> => {
+    const response = await pool.run(job, signal ? { signal } : {});
+    if (response.type === "failed") throw new ScreeningFailedError(response.message, response.faults);
+    return response;
+  };
+  return {
+    async screen(document, signal) {
+      const response = await run({ type: "screen", id: 0, document }, signal);
+      if (response.type !== "screened") throw new ScreeningFailedError("the worker answered something else");
+      return response.result;
+    },
+    async map(document, request, signal) {
+      const response = await run({ type: "map", id: 0, document, request }, signal);
+      if (response.type !== "mapped") throw new ScreeningFailedError("the worker answered something else");
+      return response.map;
+    },
+    close: () => pool.close(),
+  };
+}
