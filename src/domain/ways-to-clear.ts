@@ -6,7 +6,7 @@ import { sourceFinder, numberedSources } from "./sources";
 import { radians } from "./units";
 import { waitingCircuits } from "./waiting-circuits";
 
-interface Judged {
+export interface Judged {
   document: PlanDocument;
   result: Pick<ScreeningResult, "earthField">;
   sensor: Sensor;
@@ -67,7 +67,7 @@ function waysToCertainty({ finding, document }: Judged): string[] {
  * The share of all currents at which the value and its present uncertainty just fit the limit; U never grows when
  * currents shrink, so this is on the safe side. Null where the value does not follow the currents alone.
  */
-function shareOfAllSources({ finding, sensor, document, result }: Judged): number | null {
+export function shareOfAllSources({ finding, sensor, document, result }: Judged): number | null {
   const { kind, value, limit, expandedUncertainty } = finding;
   const roomForValue = limit - expandedUncertainty;
   if (kind === "range" || value <= 0 || roomForValue <= 0) return null;
@@ -106,7 +106,7 @@ function largestSpender(finding: Finding) {
  * slope, so the value never falls below that line: the share is a necessary one. Below 0: not even without it.
  * Null for kinds whose contributions are no such slope.
  */
-function shareOfSpender({ finding, sensor }: Judged, part: number): number | null {
+export function shareOfSpender({ finding, sensor }: Judged, part: number): number | null {
   const limitOfSensor = sensor.limits.find(({ id }) => id === finding.limitId);
   const isSlope =
     finding.kind === "static" ||
