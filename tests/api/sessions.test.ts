@@ -1,11 +1,15 @@
 import { eq } from "drizzle-orm";
 import { afterAll, beforeAll, describe, expect, it } from "vitest";
+import { accountView } from "../../src/server/auth/account";
 import { hashOf } from "../../src/server/auth/secrets";
 import { purgeExpired } from "../../src/server/auth/purge";
 import { createSession } from "../../src/server/auth/session";
+import { mintSignInLink } from "../../src/server/auth/sign-in-links";
 import { db } from "../../src/server/db/client";
 import { listActivity } from "../../src/server/db/queries/activity";
-import { sessions } from "../../src/server/db/schema/people";
+import { countAttempt } from "../../src/server/db/queries/rate-limits";
+import { insertPendingSignIn } from "../../src/server/db/queries/sign-ins";
+import { pendingSignIns, rateLimits, sessions, signInLinks } from "../../src/server/db/schema/people";
 import { as } from "../fixtures/api-client";
 import { newMember, newOrganisation, type SignedInMember } from "../fixtures/organisation";
 import { startTestApp, type TestApp } from "../support/test-app";
@@ -80,13 +84,45 @@ describe("a session", () => {
     const row = await sessionRow(hashOf(await createSession(db(), member.userId, now)));
     expect((row?.expiresAt.getTime() ?? 0) - now.getTime()).toBe(12 * 60 * minuteMs);
   });
+});
 
-  it("is purged when it has expired, and not before", async () => {
-    const expired = hashOf(await createSession(db(), member.userId, ago(12 * 60 * minuteMs + 1000)));
-    const living = hashOf(await createSession(db(), member.userId, ago(11 * 60 * minuteMs)));
+describe("the purge", () => {
+  it("removes what has expired, and nothing that is still of use", async () => {
+    const { userId } = await newMember(organisation, ["planner"]);
+    const hourMs = 60 * minuteMs;
+    const expired = hashOf(await createSession(db(), userId, ago(12 * hourMs + 1000)));
+    const living = hashOf(await createSession(db(), userId, ago(11 * hourMs)));
+    await mintSignInLink(db(), userId, ago(25 * hourMs));
+    await mintSignInLink(db(), userId, ago(23 * hourMs));
+    const pending = {
+      organisationId: null,
+      state: "",
+      nonce: "",
+      codeVerifier: "",
+      returnTo: "/",
+      subject: null,
+    };
+    await insertPendingSignIn(db(), { ...pending, id: hashOf("old"), expiresAt: ago(1) });
+    await insertPendingSignIn(db(), { ...pending, id: hashOf("new"), expiresAt: ago(-minuteMs) });
+    await countAttempt(db(), "old", ago(3 * hourMs));
+    await countAttempt(db(), "new", ago(hourMs));
     await purgeExpired();
-    expect(await sessionRow(expired)).toBeUndefined();
-    expect(await sessionRow(living)).toBeDefined();
+    expect([await sessionRow(expired), (await sessionRow(living))?.id]).toEqual([undefined, living]);
+    expect(await db().$count(signInLinks)).toBe(1);
+    expect((await db().select().from(pendingSignIns)).map(({ id }) => id)).toEqual([hashOf("new")]);
+    expect((await db().select().from(rateLimits)).map(({ bucket }) => bucket)).toEqual(["new"]);
+  });
+});
+
+describe("the account page's list", () => {
+  it("shows the living sessions of that person alone and marks this one", async () => {
+    member = await newMember(organisation, ["planner", "auditor"]);
+    await otherBrowser();
+    await createSession(db(), member.userId, ago(31 * minuteMs));
+    const view = await accountView(member, idOf(member));
+    expect(view).toMatchObject({ name: member.name, roles: ["planner", "auditor"] });
+    expect(view.email).toContain("@members.example");
+    expect(view.sessions.map(({ isThis }) => isThis).sort()).toEqual([false, true]);
   });
 });
 

@@ -4,7 +4,6 @@ import { recordActivity } from "../activity/record";
 import { db, type Queryable } from "../db/client";
 import { deleteSession } from "../db/queries/sessions";
 import { readCookie, sessionCookieName } from "./cookies";
-import { purgeExpired } from "./purge";
 import { hashOf } from "./secrets";
 import { createSession, giveSessionCookie } from "./session";
 
@@ -43,6 +42,5 @@ export async function signIn(
   });
   if ("problem" in outcome) return outcome.problem;
   giveSessionCookie(cookies, outcome.token);
-  await purgeExpired();
   return null;
 }

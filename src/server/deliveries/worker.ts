@@ -1,4 +1,5 @@
 import { setTimeout as pause } from "node:timers/promises";
+import { purgeExpired } from "../auth/purge";
 import { db } from "../db/client";
 import { deleteSettledSignInDeliveries } from "../db/queries/deliveries";
 import { errorReport } from "../error-report";
@@ -25,6 +26,7 @@ export async function runDeliveryWorker({ signal }: { signal: AbortSignal }): Pr
       try {
         if (Date.now() >= purgeAtMs) {
           await deleteSettledSignInDeliveries(db(), new Date(Date.now() - signInMemoryMs));
+          await purgeExpired();
           purgeAtMs = Date.now() + purgeEveryMs;
         }
         while (!isStopping() && (await deliverNext(transport)));
