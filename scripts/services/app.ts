@@ -23,7 +23,7 @@ const startEntry = (
     args: ["--enable-source-maps", nodeEntry(entry)],
     cwd: repositoryFolder,
     env: { ...baseEnvironment(), ...environment },
-    ...(logFolder ? { logFile: join(logFolder, `${entry}.log`) } : { echo: true }),
+    ...(logFolder ? { logFile: join(logFolder, `${entry}.log`) } : {}),
     readyWhen: "message",
   });
 

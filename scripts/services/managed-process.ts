@@ -1,6 +1,7 @@
 import { spawn, type ChildProcess } from "node:child_process";
-import { createWriteStream, mkdirSync, type WriteStream } from "node:fs";
+import { closeSync, mkdirSync, openSync } from "node:fs";
 import { dirname } from "node:path";
+import { FileTail, PipeTail, type OutputTail } from "./output-tail";
 
 export interface ProcessRecipe {
   /** What people call it in messages: "the mail fake". */
@@ -9,13 +10,11 @@ export interface ProcessRecipe {
   args: readonly string[];
   env?: NodeJS.ProcessEnv;
   cwd?: string;
-  /** Everything the process prints is appended here. */
+  /** Everything the process prints is appended here; without one it is shown as this process's own output. */
   logFile?: string;
-  /** Shown as it comes as well, for a process whose log is this process's own. */
-  echo?: boolean;
   /**
    * How the process says that it is ready: `message` waits for an IPC message `"ready"` (our own Node
-   * processes), a pattern waits for a line that it prints.
+   * processes), a pattern waits for something that it prints.
    */
   readyWhen: "message" | RegExp;
   readyWithinMs?: number;
@@ -37,49 +36,24 @@ export class ProcessFailure extends Error {
   }
 }
 
-const tailLength = 4_000;
-
 /** A child process that has said it is ready, and can be stopped. */
 export class ManagedProcess {
   readonly exited: Promise<Exit>;
-  private tail = "";
-  private readonly log: WriteStream | undefined;
 
   private constructor(
     readonly name: string,
     private readonly child: ChildProcess,
-    { logFile, echo = false }: Pick<ProcessRecipe, "logFile" | "echo">,
+    private readonly tail: OutputTail,
   ) {
-    if (logFile) mkdirSync(dirname(logFile), { recursive: true });
-    this.log = logFile ? createWriteStream(logFile, { flags: "a", mode: 0o600 }) : undefined;
     this.exited = new Promise((resolve) => {
-      child.once("error", (error) => {
-        this.keep(Buffer.from(String(error)));
-        resolve({ code: 127, signal: null });
-      });
-      child.once("close", (code, signal) => {
-        this.log?.end();
-        resolve({ code, signal });
-      });
+      child.once("error", () => resolve({ code: 127, signal: null }));
+      child.once("close", (code, signal) => resolve({ code, signal }));
     });
-    if (echo) {
-      child.stdout?.pipe(process.stdout, { end: false });
-      child.stderr?.pipe(process.stderr, { end: false });
-    }
-    child.stdout?.on("data", (chunk: Buffer) => this.keep(chunk));
-    child.stderr?.on("data", (chunk: Buffer) => this.keep(chunk));
   }
 
-  /** The child has its own process group, so that Ctrl-C reaches only the parent, which stops things in order. */
   static async start(recipe: ProcessRecipe): Promise<ManagedProcess> {
-    const withMessages = recipe.readyWhen === "message";
-    const child = spawn(recipe.command, recipe.args, {
-      detached: true,
-      stdio: withMessages ? ["ignore", "pipe", "pipe", "ipc"] : ["ignore", "pipe", "pipe"],
-      ...(recipe.env ? { env: recipe.env } : {}),
-      ...(recipe.cwd ? { cwd: recipe.cwd } : {}),
-    });
-    const managed = new ManagedProcess(recipe.name, child, recipe);
+    const { child, tail } = launch(recipe);
+    const managed = new ManagedProcess(recipe.name, child, tail);
     try {
       await managed.becomesReady(recipe.readyWhen, recipe.readyWithinMs ?? 60_000);
     } catch (error) {
@@ -95,7 +69,7 @@ export class ManagedProcess {
 
   /** The last few thousand characters that the process printed. */
   get output(): string {
-    return this.tail;
+    return this.tail.read();
   }
 
   /** SIGTERM, then SIGKILL when it has not ended within `graceMs`. Stopping twice is harmless. */
@@ -108,15 +82,10 @@ export class ManagedProcess {
     return exit;
   }
 
-  private keep(chunk: Buffer): void {
-    this.log?.write(chunk);
-    this.tail = (this.tail + chunk.toString("utf8")).slice(-tailLength);
-  }
-
   private becomesReady(readyWhen: ProcessRecipe["readyWhen"], withinMs: number): Promise<void> {
     return new Promise((resolve, reject) => {
       const fail = (what: string, exit?: Exit) =>
-        reject(new ProcessFailure(this.name, `${this.name} ${what}`, this.tail, exit));
+        reject(new ProcessFailure(this.name, `${this.name} ${what}`, this.output, exit));
       const timer = setTimeout(() => fail(`did not answer within ${withinMs / 1000} s`), withinMs);
       const ready = () => {
         clearTimeout(timer);
@@ -127,11 +96,11 @@ export class ManagedProcess {
           if (message === "ready") ready();
         });
       } else {
-        const look = () => {
-          if (readyWhen.test(this.tail)) ready();
-        };
-        this.child.stdout?.on("data", look);
-        this.child.stderr?.on("data", look);
+        for (const stream of [this.child.stdout, this.child.stderr]) {
+          stream?.on("data", () => {
+            if (readyWhen.test(this.output)) ready();
+          });
+        }
       }
       void this.exited.then((exit) => {
         clearTimeout(timer);
@@ -139,6 +108,29 @@ export class ManagedProcess {
       });
     });
   }
+}
+
+/**
+ * The child has its own process group, so that Ctrl-C reaches only the parent, which stops things in order. It
+ * writes to its log file itself where it can: a pipe would break with the parent, and whoever logs into a broken
+ * pipe may not end.
+ */
+function launch({ command, args, env, cwd, logFile, readyWhen }: ProcessRecipe): {
+  child: ChildProcess;
+  tail: OutputTail;
+} {
+  const options = { detached: true, ...(env ? { env } : {}), ...(cwd ? { cwd } : {}) };
+  if (logFile) mkdirSync(dirname(logFile), { recursive: true, mode: 0o700 });
+  if (readyWhen === "message" && logFile) {
+    const tail = new FileTail(logFile);
+    const log = openSync(logFile, "a", 0o600);
+    const child = spawn(command, args, { ...options, stdio: ["ignore", log, log, "ipc"] });
+    closeSync(log);
+    return { child, tail };
+  }
+  const ipc = readyWhen === "message" ? (["ipc"] as const) : [];
+  const child = spawn(command, args, { ...options, stdio: ["ignore", "pipe", "pipe", ...ipc] });
+  return { child, tail: new PipeTail(child, logFile) };
 }
 
 export function describeExit({ code, signal }: Exit): string {

@@ -89,35 +89,51 @@ async function startAll(
   const { secrets } = installation;
   const logFolder = join(dataFolder, "logs");
   const mariaDbFolder = mariaDbFolderIn(dataFolder);
-  const mariaDb = await startMariaDb({
+  const mariaDb = startMariaDb({
     dataFolder: mariaDbFolder,
     port: ports.mariaDb,
     passwords: { root: secrets.rootPassword, owner: secrets.ownerPassword, app: secrets.appPassword },
     databasePattern: database,
     database,
     logFile: join(logFolder, "mariadb.log"),
+  }).then((started) => {
+    supervisor.watch(started.process, `--datadir=${mariaDbFolder}`, started.stop);
+    return started;
   });
-  supervisor.watch(mariaDb.process, `--datadir=${mariaDbFolder}`, mariaDb.stop);
-
-  const fakes = await startFakes({
+  const fakes = startFakes({
     ports,
     secrets,
     dataFolder,
     logFolder,
     people: demoPeople,
     appOrigins: [appOrigin],
+  }).then((started) => {
+    for (const fake of started) supervisor.watch(fake, "fakes/");
   });
-  for (const fake of fakes) supervisor.watch(fake, "fakes/");
+  await allOrFirstFailure([mariaDb, fakes]);
 
-  const ownerUrl = mariaDb.ownerUrl(database);
-  const environment = localEnvironment(ports, secrets, { appOrigin, databaseUrl: mariaDb.appUrl(database) });
+  const ownerUrl = (await mariaDb).ownerUrl(database);
+  const environment = localEnvironment(ports, secrets, {
+    appOrigin,
+    databaseUrl: (await mariaDb).appUrl(database),
+  });
   if (!installation.ready) await emptyDatabase(ownerUrl);
   await migrate(environment, ownerUrl);
   await seedWhenEmpty(environment, ownerUrl, report);
   if (!installation.ready) saveInstallation(dataFolder, { ...installation, ready: true });
 
-  supervisor.watch(await startServer(environment, logFolder), nodeEntry("server"));
-  supervisor.watch(await startDeliveryWorker(environment, logFolder), nodeEntry("delivery-worker"));
+  await allOrFirstFailure([
+    startServer(environment, logFolder).then((server) => supervisor.watch(server, nodeEntry("server"))),
+    startDeliveryWorker(environment, logFolder).then((worker) =>
+      supervisor.watch(worker, nodeEntry("delivery-worker")),
+    ),
+  ]);
+}
+
+/** Waits for all, also when one fails: what still starts has to be known before everything is stopped. */
+async function allOrFirstFailure(starting: readonly Promise<unknown>[]): Promise<void> {
+  const failed = (await Promise.allSettled(starting)).find(({ status }) => status === "rejected");
+  if (failed?.status === "rejected") throw failed.reason;
 }
 
 async function withConnection<Result>(
