@@ -53,7 +53,3 @@ export const loadDraft = async <D, H>(userId: string, planId: string): Promise<D
 export const keepDraft = async <D, H>(draft: Draft<D, H>): Promise<void> => {
   await inStore("readwrite", (store) => store.put(draft));
 };
-
-export const dropDraft = async (userId: string, planId: string): Promise<void> => {
-  await inStore("readwrite", (store) => store.delete(keyOf(userId, planId)));
-};

@@ -1,6 +1,7 @@
 import { useMemo } from "react";
+import { positionsWorstFirst } from "~/domain/positions";
+import { drawnSourceCount, numberedSources, sourceFinder } from "~/domain/sources";
 import { fromSourcesDrawn } from "~/domain/verdict-words";
-import { entriesOf, sourceKeys, sourcesDrawn } from "~/sheet/ledger";
 import type { PlanDocument } from "~/domain/plan-document/plan-document";
 import type { Live } from "~/components/sheet/store";
 import { LedgerEntry } from "./LedgerEntry";
@@ -16,12 +17,12 @@ interface Props {
 
 /** Every sensor worst first, with what it has of its budget and who spends it. */
 export function Ledger({ document, live, litId, onLight, selectedSensorId, onSelect }: Props) {
-  const keys = useMemo(() => sourceKeys(document), [document]);
-  const entries = useMemo(
-    () => (live.kind === "screened" ? entriesOf(document, live.result) : []),
+  const find = useMemo(() => sourceFinder(numberedSources(document)), [document]);
+  const positions = useMemo(
+    () => (live.kind === "screened" ? positionsWorstFirst(document, live.result) : []),
     [document, live],
   );
-  const unjudged = document.sensors.filter(({ id }) => !entries.some(({ sensorId }) => sensorId === id));
+  const unjudged = document.sensors.filter(({ id }) => !positions.some(({ sensor }) => sensor.id === id));
   return (
     <section aria-labelledby="ledger-title">
       <h2 id="ledger-title" className="text-base">
@@ -30,19 +31,19 @@ export function Ledger({ document, live, litId, onLight, selectedSensorId, onSel
       <p className="text-xs text-muted" data-testid="ledger-basis">
         {document.sensors.length === 0
           ? "No sensor is placed yet."
-          : `Worst first, ${fromSourcesDrawn(sourcesDrawn(document))}.`}
+          : `Worst first, ${fromSourcesDrawn(drawnSourceCount(document))}.`}
       </p>
       <LedgerMessages live={live} hasSensors={document.sensors.length > 0} />
       <ol className="mt-2 grid gap-1">
-        {entries.map((entry) => (
+        {positions.map((position) => (
           <LedgerEntry
-            key={entry.sensorId}
-            entry={entry}
-            document={document}
-            keys={keys}
+            key={position.sensor.id}
+            position={position}
+            loadCases={document.loadCases}
+            find={find}
             litId={litId}
             onLight={onLight}
-            selected={entry.sensorId === selectedSensorId}
+            selected={position.sensor.id === selectedSensorId}
             onSelect={onSelect}
           />
         ))}

@@ -2,14 +2,14 @@ import { BudgetBar } from "~/components/ui/BudgetBar";
 import { NeedleMark } from "~/components/ui/NeedleMark";
 import { Verdict } from "~/components/ui/Verdict";
 import { formatBudget, formatLimit, formatQuantity, formatShare, quantityText } from "~/domain/format";
-import type { PlanDocument } from "~/domain/plan-document/plan-document";
-import type { Entry } from "~/sheet/ledger";
-import { limitTitles } from "~/sheet/edits/sensor-kinds";
+import type { LoadCase } from "~/domain/plan-document/plan-document";
+import { loadCaseName, type Position } from "~/domain/positions";
+import type { DrawnSource } from "~/domain/sources";
 
 interface Props {
-  entry: Entry;
-  document: PlanDocument;
-  keys: ReadonlyMap<string, { key: string; name: string }>;
+  position: Position;
+  loadCases: readonly LoadCase[];
+  find: (sourceId: string) => DrawnSource;
   litId: string | null;
   onLight: (circuitId: string | null) => void;
   selected: boolean;
@@ -19,22 +19,19 @@ interface Props {
 /** Spenders named in words below the bar. */
 const namedSpenders = 3;
 
-export function LedgerEntry({ entry, document, keys, litId, onLight, selected, onSelect }: Props) {
-  const { name, verdict, finding } = entry;
-  const parts = finding.contributions.map(({ id, part }) => ({
-    id,
-    part,
-    key: keys.get(id)?.key ?? "b",
-    name: keys.get(id)?.name ?? "background",
-  }));
+export function LedgerEntry({ position, loadCases, find, litId, onLight, selected, onSelect }: Props) {
+  const { sensor, verdict, governing: finding } = position;
+  if (finding === undefined) return null;
+  const { name } = sensor;
+  const parts = finding.contributions.map(({ id, part }) => ({ ...find(id), part }));
   const spenders = parts
     .filter(({ part }) => Math.abs(part) >= 0.005)
     .sort((a, b) => Math.abs(b.part) - Math.abs(a.part));
-  const loadCase = document.loadCases.find(({ id }) => id === finding.loadCaseId);
+  const loadCase = loadCaseName(loadCases, finding.loadCaseId);
   return (
     <li
       className={`border-l-4 py-1.5 pl-2 pr-1 ${selected ? "border-accent bg-raised" : "border-transparent"}`}
-      data-sensor-id={entry.sensorId}
+      data-sensor-id={sensor.id}
     >
       <div className="flex items-start gap-2">
         <NeedleMark budgetUsed={finding.budgetUsed} verdict={verdict} title="" />
@@ -44,7 +41,7 @@ export function LedgerEntry({ entry, document, keys, litId, onLight, selected, o
               type="button"
               className="min-h-6 cursor-pointer text-left font-semibold [overflow-wrap:anywhere] hover:underline"
               aria-pressed={selected}
-              onClick={() => onSelect(entry.sensorId)}
+              onClick={() => onSelect(sensor.id)}
             >
               {name}
             </button>
@@ -55,8 +52,8 @@ export function LedgerEntry({ entry, document, keys, litId, onLight, selected, o
           </div>
           <p className="text-sm text-muted">
             {quantityText(formatQuantity(finding.value, finding.unit, finding.expandedUncertainty))} of{" "}
-            {formatLimit(finding.limit, finding.unit)}, {limitTitles[finding.kind]}
-            {loadCase !== undefined && `, in ${loadCase.name}`}
+            {formatLimit(finding.limit, finding.unit)}, {finding.measured}
+            {loadCase !== null && `, in ${loadCase}`}
           </p>
         </div>
       </div>

@@ -1,5 +1,5 @@
 import { Button } from "~/components/ui/Button";
-import { offeredKinds } from "~/sheet/edits/sensor-kinds";
+import { SENSOR_KINDS } from "~/domain/catalogue";
 import { beginMeasure } from "~/sheet/steps/measure";
 import { beginPlaceSensor } from "~/sheet/steps/place-sensor";
 import { beginSelect } from "~/sheet/steps/select";
@@ -32,10 +32,9 @@ export function beginStep(store: SheetStore, name: StepName, traceFor: TraceFor 
       );
     }
     if (name === "place-sensor") {
-      const kinds = offeredKinds();
       return beginPlaceSensor(
-        kinds,
-        kinds[0]?.id ?? "",
+        SENSOR_KINDS,
+        SENSOR_KINDS[0]?.id ?? "",
         lastHeightM(
           sensors.map(({ position }) => position[2]),
           usualSensorM,

@@ -22,7 +22,7 @@ export type MapQuantity = "static" | "alternating" | "heading";
 export interface MapSettings {
   quantity: MapQuantity;
   heightM: number;
-  /** Null maps the currents as entered. */
+  /** Null takes the first load case, or the currents as entered where there is none. */
   loadCaseId: string | null;
 }
 
@@ -61,6 +61,8 @@ export class SheetStore {
     session: Session,
     editable: boolean,
     private readonly siteEarth: EarthField | null,
+    /** What the site calls its phases. */
+    readonly phaseLabels: readonly [string, string, string],
   ) {
     this.state = {
       editable,

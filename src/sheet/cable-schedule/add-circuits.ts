@@ -42,7 +42,8 @@ function circuitName({ tag, from, to }: Cable): string {
 
 function circuitOfCable(cable: Cable, choices: ScheduleChoices): Circuit {
   const blank = blankCircuit(newId("c"), circuitName(cable));
-  const arrangement = arrangementOf(arrangementByLive[liveCores(cable)], blank.arrangement);
+  const kind = cable.cores?.neutral === true ? "quad" : arrangementByLive[liveCores(cable)];
+  const arrangement = arrangementOf(kind, blank.arrangement);
   const supply = supplyOfCable(cable, choices);
   if (cable.sizeMm2 === null) return { ...blank, arrangement, supply };
   const spacingM = touchingSpacingM(cable.sizeMm2);

@@ -12,6 +12,8 @@ export const offeredArrangements = [
   { kind: "pair", label: "pair, go and return", supplies: ["dc", "ac1"] },
   { kind: "flat", label: "flat, three in a row", supplies: ["ac3"] },
   { kind: "trefoil", label: "trefoil", supplies: ["ac3"] },
+  { kind: "quad", label: "square, three and neutral", supplies: ["ac3"] },
+  { kind: "flat-n", label: "flat, three and neutral", supplies: ["ac3"] },
 ] as const satisfies readonly {
   kind: Arrangement["kind"];
   label: string;

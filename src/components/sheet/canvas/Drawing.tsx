@@ -8,6 +8,8 @@ import { Marks } from "./MarksLayer";
 import { PaperLayer } from "./PaperLayer";
 import { PlanShapes } from "./PlanShapes";
 import { PointerReadout } from "./PointerReadout";
+import { NorthMark } from "./NorthMark";
+import { ZoomButtons } from "./ZoomButtons";
 import { useGestures } from "./use-gestures";
 import { useImage } from "./use-image";
 import { fitView, useKeys } from "./use-keys";
@@ -78,6 +80,8 @@ export function Drawing({ planId }: { planId: string }) {
         Everything here can be read and edited under Tables too.
       </p>
       <PointerReadout />
+      <ZoomButtons />
+      <NorthMark />
       {loaded.kind === "loading" && (
         <p className="absolute left-3 top-3 bg-paper px-2 text-sm text-muted" role="status">
           Loading the drawing…

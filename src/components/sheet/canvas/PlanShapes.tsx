@@ -1,8 +1,8 @@
 import { useMemo } from "react";
 import type { PlanDocument } from "~/domain/plan-document/plan-document";
+import { positionsWorstFirst } from "~/domain/positions";
 import type { Verdict } from "~/domain/screening-result";
 import { circuitsOn, ownedPaths, ownerOfCircuit, sameOwner, type OwnedPath } from "~/sheet/edits/paths";
-import { entriesOf } from "~/sheet/ledger";
 import { selectedOwners } from "~/sheet/selection";
 import { useSelection, useSheet, useShownDocument } from "../store";
 import { PathShape, type Carried } from "./PathShape";
@@ -29,8 +29,8 @@ export function PlanShapes({ scale, palette }: { scale: number; palette: Palette
   const verdicts = useMemo(() => {
     const known = new Map<string, { verdict: Verdict; budgetUsed: number }>();
     if (live.kind !== "screened") return known;
-    for (const { sensorId, verdict, finding } of entriesOf(document, live.result)) {
-      known.set(sensorId, { verdict, budgetUsed: finding.budgetUsed });
+    for (const { sensor, verdict, governing } of positionsWorstFirst(document, live.result)) {
+      known.set(sensor.id, { verdict, budgetUsed: governing?.budgetUsed ?? 0 });
     }
     return known;
   }, [document, live]);

@@ -58,12 +58,9 @@ export function MapPanel() {
           {document.loadCases.length > 0 && (
             <Choice
               label="Load case"
-              value={settings.loadCaseId ?? ""}
-              options={[
-                { value: "", label: "as entered" },
-                ...document.loadCases.map(({ id, name }) => ({ value: id, label: name })),
-              ]}
-              onChange={(id) => set({ ...settings, loadCaseId: id === "" ? null : id })}
+              value={settings.loadCaseId ?? document.loadCases[0]?.id ?? ""}
+              options={document.loadCases.map(({ id, name }) => ({ value: id, label: name }))}
+              onChange={(loadCaseId) => set({ ...settings, loadCaseId })}
             />
           )}
           <p className="text-xs text-muted">

@@ -44,6 +44,17 @@ function arrangementOptions(circuit: Circuit): { value: Arrangement["kind"]; lab
     : [...options, { value: arrangement.kind, label: arrangement.kind }];
 }
 
+/** Where the phases lie, seen along the route. */
+function phaseWords(
+  kind: Arrangement["kind"],
+  [a, b, c]: readonly [string, string, string],
+): string | undefined {
+  if (kind === "flat") return `${a}, ${b}, ${c} from the left, seen along the route.`;
+  if (kind === "trefoil") return `${a} and ${b} below, ${c} on top, seen along the route.`;
+  if (kind === "quad") return `${a}, ${b}, ${c}, N clockwise from the upper left, seen along the route.`;
+  return kind === "flat-n" ? `${a}, ${b}, ${c}, N from the left, seen along the route.` : undefined;
+}
+
 export function CircuitPanel({ circuit }: { circuit: Circuit }) {
   const store = useSheetStore();
   const document = useDocument();
@@ -85,6 +96,7 @@ export function CircuitPanel({ circuit }: { circuit: Circuit }) {
         <Choice
           label="Arrangement"
           value={arrangement.kind}
+          hint={phaseWords(arrangement.kind, store.phaseLabels)}
           options={arrangementOptions(circuit)}
           disabled={disabled}
           onChange={(kind) => {

@@ -1,6 +1,6 @@
 import { Button } from "~/components/ui/Button";
 import type { Limit, Sensor } from "~/domain/plan-document/sensor";
-import { limitTitles, newLimit, offeredLimits } from "~/sheet/edits/sensor-kinds";
+import { limitKinds, limitTitles, newLimit } from "~/sheet/edits/sensor-kinds";
 import { Choice } from "../inputs/Choice";
 import { NumberField } from "../inputs/NumberField";
 import type { ChangeSensor } from "./SensorPanel";
@@ -19,7 +19,7 @@ export function LimitFields({ sensor, change, disabled, earthKnown }: Props) {
       ...present,
       limits: present.limits.map((limit) => (limit.id === id ? { ...next, id } : limit)),
     }));
-  const addable = offeredLimits.filter((kind) => kind !== "heading" || earthKnown);
+  const addable = limitKinds.filter((kind) => earthKnown || (kind !== "heading" && kind !== "range"));
   return (
     <fieldset className="grid gap-3">
       <legend className="mb-1 text-sm font-semibold">Limits</legend>
@@ -47,22 +47,21 @@ export function LimitFields({ sensor, change, disabled, earthKnown }: Props) {
         </div>
       ))}
       {!disabled && (
-        <div className="flex flex-wrap gap-2">
-          {addable.map((kind) => (
-            <Button
-              key={kind}
-              small
-              onClick={() =>
-                change("Limit", (present) => ({
-                  ...present,
-                  limits: [...present.limits, newLimit(kind, present.limits)],
-                }))
-              }
-            >
-              Add a limit: {limitTitles[kind]}
-            </Button>
-          ))}
-        </div>
+        <Choice
+          label="Add a limit"
+          value=""
+          options={[
+            { value: "", label: "choose its kind" },
+            ...addable.map((kind) => ({ value: kind, label: limitTitles[kind] })),
+          ]}
+          onChange={(kind) => {
+            if (kind !== "")
+              change("Limit", (present) => ({
+                ...present,
+                limits: [...present.limits, newLimit(kind, present.limits)],
+              }));
+          }}
+        />
       )}
     </fieldset>
   );

@@ -1,8 +1,8 @@
 import { Button } from "~/components/ui/Button";
-import { MAKERS_FIGURE_REMARK } from "~/domain/catalogue";
+import { MAKERS_FIGURE_REMARK, SENSOR_KINDS } from "~/domain/catalogue";
 import type { PlanDocument } from "~/domain/plan-document/plan-document";
 import type { Sensor } from "~/domain/plan-document/sensor";
-import { limitsOfKind, offeredKinds } from "~/sheet/edits/sensor-kinds";
+import { limitsOfKind } from "~/sheet/edits/sensor-kinds";
 import { removeSensors } from "~/sheet/edits/remove";
 import { needsEarthField, updateSensor } from "~/sheet/edits/sensors";
 import { Choice } from "../inputs/Choice";
@@ -17,7 +17,7 @@ const axes = ["x", "y", "z"] as const;
 /** The catalogue's kind whose limits the sensor has; "" where they are its own. */
 function kindIdOf(sensor: Sensor): string {
   const own = JSON.stringify(sensor.limits);
-  return offeredKinds().find((kind) => JSON.stringify(limitsOfKind(kind)) === own)?.id ?? "";
+  return SENSOR_KINDS.find((kind) => JSON.stringify(limitsOfKind(kind)) === own)?.id ?? "";
 }
 
 export function SensorPanel({ sensor }: { sensor: Sensor }) {
@@ -26,7 +26,7 @@ export function SensorPanel({ sensor }: { sensor: Sensor }) {
   const disabled = !useEditable();
   const change = (label: string, how: (sensor: Sensor) => Sensor) =>
     store.edit(`${label} of ${sensor.name}`, (whole: PlanDocument) => updateSensor(whole, sensor.id, how));
-  const kinds = offeredKinds().filter(
+  const kinds = SENSOR_KINDS.filter(
     (kind) => document.earthField !== null || !limitsOfKind(kind).some(needsEarthField),
   );
   const kindId = kindIdOf(sensor);

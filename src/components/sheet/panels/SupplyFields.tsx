@@ -41,9 +41,13 @@ export function SupplyFields({ circuit, change, disabled }: Props) {
         value={kind}
         options={supplyOptions}
         disabled={disabled}
-        onChange={(next) =>
-          change("Supply", (present) => withSupply(present, supplyOf(next, present.supply)))
-        }
+        onChange={(next) => {
+          setChosen(next);
+          change("Supply", (present) => ({
+            ...withSupply(present, supplyOf(next, present.supply)),
+            ...(present.supply === null && { supply: null }),
+          }));
+        }}
       />
       <NumberField
         label={kind === "dc" ? "Current, with its sign" : "Current, rms"}

@@ -1,0 +1,62 @@
+import type { PlanDocument } from "~/domain/plan-document/plan-document";
+import type { ScreeningResult } from "~/domain/screening-result";
+import { createScreeningClient, type ScreeningClient } from "~/workers/browser";
+import { ScreeningFailedError, type FieldMap, type FieldMapRequest } from "~/workers/protocol";
+import { Latest } from "./latest";
+
+export type { FieldMap, FieldMapRequest } from "~/workers/protocol";
+
+export type Outcome<T> =
+  | { kind: "done"; value: T }
+  | { kind: "refused"; message: string; faults: readonly { path: string; message: string }[] };
+
+async function settled<T>(promise: Promise<T>): Promise<Outcome<T>> {
+  try {
+    return { kind: "done", value: await promise };
+  } catch (failed) {
+    if (!(failed instanceof ScreeningFailedError)) throw failed;
+    return { kind: "refused", message: failed.message, faults: failed.faults };
+  }
+}
+
+interface Listeners {
+  onResult: (document: PlanDocument, outcome: Outcome<ScreeningResult>) => void;
+  onMap: (request: FieldMapRequest, outcome: Outcome<FieldMap>) => void;
+}
+
+/**
+ * Screens the newest document and maps the newest request in workers of their own, so that a map never holds up the
+ * ledger. What is asked for while one runs waits, and of those that wait only the newest counts.
+ */
+export class LiveScreening {
+  private readonly ledger: ScreeningClient = createScreeningClient();
+  private readonly mapper: ScreeningClient = createScreeningClient();
+  private readonly documents: Latest<PlanDocument>;
+  private readonly maps: Latest<{ document: PlanDocument; map: FieldMapRequest }>;
+  private disposed = false;
+
+  constructor(listeners: Listeners) {
+    this.documents = new Latest(async (document) => {
+      const outcome = await settled(this.ledger.screen(document));
+      if (!this.disposed) listeners.onResult(document, outcome);
+    });
+    this.maps = new Latest(async (request) => {
+      const outcome = await settled(this.mapper.map(request.document, request.map));
+      if (!this.disposed) listeners.onMap(request.map, outcome);
+    });
+  }
+
+  screen(document: PlanDocument): void {
+    this.documents.ask(document);
+  }
+
+  map(document: PlanDocument, map: FieldMapRequest): void {
+    this.maps.ask({ document, map });
+  }
+
+  dispose(): void {
+    this.disposed = true;
+    this.ledger.dispose();
+    this.mapper.dispose();
+  }
+}
