@@ -61,6 +61,13 @@ describe("composing", () => {
     expect(second.body.error.detail).toEqual(first.body);
   });
 
+  it("begins one draft, however often it is asked for at the same time", async () => {
+    const ask = () => compose({ coveringText: "", recipients: [] });
+    const answers = await Promise.all([ask(), ask(), ask(), ask()]);
+    expect(answers.map(({ status }) => status).sort()).toEqual([200, 200, 200, 201]);
+    expect(new Set(answers.map(({ body }) => body.id)).size).toBe(1);
+  });
+
   it("refuses whatever would begin another header or another recipient", async () => {
     const refused: [object, string][] = [
       [{ name: "A\r\nBcc: all@site.example", email: "a@site.example" }, "recipients[0].name"],

@@ -7,7 +7,7 @@ import type { ScreeningResult } from "~/domain/screening-result";
 import { db } from "../db/client";
 import { listNotices } from "../db/queries/notices";
 import { findPlan, type PlanRow } from "../db/queries/plans";
-import { findScreeningResult, listScreenings } from "../db/queries/screenings";
+import { findScreeningResult } from "../db/queries/screenings";
 import { findSite, type SiteRow } from "../db/queries/sites";
 import { readScreening } from "./stored";
 
@@ -28,8 +28,6 @@ export interface ScreeningView {
   result: ScreeningResult;
   notices: { id: string; version: number; state: NoticeState; createdAt: Date }[];
 }
-
-const listedScreenings = 100;
 
 const notThere = () =>
   new Refusal("not-found", "The plan of this screening is no longer there. Go back to your Desk.");
@@ -57,11 +55,6 @@ export async function screeningView(member: Member, screeningId: string): Promis
     result,
     notices: await listNotices(db(), organisationId, screeningId),
   };
-}
-
-/** The plan's latest screenings, without documents and results. */
-export async function planScreenings(member: Member, planId: string) {
-  return listScreenings(db(), member.organisationId, planId, listedScreenings);
 }
 
 /** The result as it was stored, to the byte. */
