@@ -43,7 +43,7 @@ export function Sheet(props: Props) {
         beginSession(start.document, start.history),
         mayEdit && matchMedia(wideEnough).matches,
         siteEarth,
-        phaseLabels,
+        phaseLabels.split("/"),
       ),
   );
   useEffect(() => {

@@ -20,7 +20,8 @@ export interface SheetProps {
   mayScreen: boolean;
   /** The Earth's field at the site today; null where the site has no place. */
   siteEarth: EarthField | null;
-  phaseLabels: readonly [string, string, string];
+  /** What the site calls its phases, such as "L1/L2/L3". */
+  phaseLabels: string;
 }
 
 async function start(planId: string, userId: string, signal: AbortSignal): Promise<Start> {

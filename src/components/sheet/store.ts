@@ -62,7 +62,7 @@ export class SheetStore {
     editable: boolean,
     private readonly siteEarth: EarthField | null,
     /** What the site calls its phases. */
-    readonly phaseLabels: readonly [string, string, string],
+    readonly phaseLabels: readonly string[],
   ) {
     this.state = {
       editable,

@@ -47,7 +47,7 @@ function arrangementOptions(circuit: Circuit): { value: Arrangement["kind"]; lab
 /** Where the phases lie, seen along the route. */
 function phaseWords(
   kind: Arrangement["kind"],
-  [a, b, c]: readonly [string, string, string],
+  [a = "L1", b = "L2", c = "L3"]: readonly string[],
 ): string | undefined {
   if (kind === "flat") return `${a}, ${b}, ${c} from the left, seen along the route.`;
   if (kind === "trefoil") return `${a} and ${b} below, ${c} on top, seen along the route.`;
