@@ -1,3 +1,4 @@
+import { fileURLToPath } from "node:url";
 import node from "@astrojs/node";
 import react from "@astrojs/react";
 import tailwindcss from "@tailwindcss/vite";
@@ -31,6 +32,8 @@ export default defineConfig({
   devToolbar: { enabled: false },
   vite: {
     plugins: [tailwindcss()],
+    // Workers are bundled apart from the pages and would not know the alias of tsconfig.json.
+    resolve: { alias: { "~": fileURLToPath(new URL("./src", import.meta.url)) } },
     build: { assetsInlineLimit: 0 },
     worker: { format: "es" },
   },
