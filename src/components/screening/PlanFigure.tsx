@@ -5,14 +5,14 @@ import { NeedleMark } from "~/components/ui/NeedleMark";
 import {
   figureFrame,
   type FigureFrame,
-  type FigureLabel,
   figureLines,
   type FigureLine,
   type FigurePoint,
-  placeLabels,
   scaleBarM,
 } from "./figure-geometry";
+import { balloonRadius, type FigureLabel, obstacleBoxes, placeBalloons, placeLabels } from "./figure-labels";
 import { type Position, positionsWorstFirst } from "~/domain/positions";
+import { positionKey } from "./position-key";
 import { numberedSources, sourceFinder } from "~/domain/sources";
 
 interface Props {
@@ -26,6 +26,8 @@ interface Props {
 }
 
 const markSize = 30;
+/** Half the room that a piece of equipment takes with its balloon. */
+const equipmentReach = 20;
 
 /** The plan as it was screened: conductors in copper with their numbers, sensors as needle marks. */
 export function PlanFigure({ document, result, imageUrl, label, width }: Props) {
@@ -34,17 +36,34 @@ export function PlanFigure({ document, result, imageUrl, label, width }: Props) 
   const narrow = frame.width <= 720;
   const lines = figureLines(document, frame);
   const find = sourceFinder(numberedSources(document));
-  const positions = positionsWorstFirst(document, result);
-  const marks = positions.map(({ sensor, verdict, governing }) => ({
-    at: frame.place(sensor.position),
-    letters: Math.max(shortened(sensor.name).length, budgetWords(governing?.budgetUsed ?? 0, verdict).length),
+  const positions = positionsWorstFirst(document, result).map((position, index) => ({
+    ...position,
+    key: positionKey(index),
   }));
-  const labels = placeLabels(marks, lines, frame, markSize / 2);
+  const marks = positions.map((position) => {
+    const [name, budget] = labelLines(position);
+    return {
+      at: frame.place(position.sensor.position),
+      letters: Math.max(name.length, budget.length),
+      shortLetters: position.key.length,
+    };
+  });
+  const markBoxes = obstacleBoxes(
+    marks.map(({ at }) => at),
+    markSize / 2,
+  );
+  const equipmentBoxes = obstacleBoxes(
+    document.equipment.map(({ centre }) => frame.place(centre)),
+    equipmentReach,
+  );
+  const balloons = placeBalloons(lines, [...equipmentBoxes, ...markBoxes]);
+  const obstacles = [...equipmentBoxes, ...obstacleBoxes(balloons.flat(), balloonRadius)];
+  const labels = placeLabels(marks, lines, obstacles, frame, markSize / 2);
   return (
     <svg
       role="img"
       aria-label={label}
-      className={`block h-auto w-full text-[13px] ${narrow ? "min-w-[38rem]" : "min-w-[52rem]"}`}
+      className={`block h-auto w-full text-[13px] ${narrow ? "min-w-[38rem]" : "min-w-[62rem]"}`}
       viewBox={`0 0 ${frame.width.toFixed(0)} ${frame.height.toFixed(0)}`}
     >
       {imageUrl !== undefined && <SheetImage document={document} frame={frame} url={imageUrl} />}
@@ -59,12 +78,13 @@ export function PlanFigure({ document, result, imageUrl, label, width }: Props) 
         </g>
       ))}
       {lines.map((line) => (
-        <Conductors
-          key={line.circuitIds.join()}
-          line={line}
-          keys={line.circuitIds.map((id) => find(id).key)}
-        />
+        <Conductors key={line.circuitIds.join()} line={line} />
       ))}
+      {lines.map((line, index) =>
+        line.circuitIds.map((id, place) => (
+          <Balloon key={id} at={balloons[index]?.[place] ?? line.middle} text={find(id).key} />
+        )),
+      )}
       {document.equipment.map(({ id, name, centre }) => {
         const [x, y] = frame.place(centre);
         return (
@@ -137,20 +157,20 @@ function ZoneName({
 }
 
 /** DC: a solid line with a current arrow; AC: a double line; current not known: dashes. */
-function Conductors({ line, keys }: { line: FigureLine; keys: readonly string[] }) {
+function Conductors({ line }: { line: FigureLine }) {
   const points = line.points.map((point) => point.join(",")).join(" ");
   const [x, y] = line.middle;
   const shared = { points, fill: "none", strokeLinejoin: "round" as const };
   return (
     <g>
-      {line.flow === "dc" && <polyline {...shared} className="stroke-copper" strokeWidth="2.5" />}
+      {line.flow === "dc" && <polyline {...shared} className="stroke-copper" strokeWidth="2" />}
       {line.flow === "unknown" && (
         <polyline {...shared} className="stroke-copper" strokeWidth="2" strokeDasharray="7 5" />
       )}
       {line.flow === "ac" && (
         <>
-          <polyline {...shared} className="stroke-copper" strokeWidth="5.5" />
-          <polyline {...shared} className="stroke-paper" strokeWidth="2.5" />
+          <polyline {...shared} className="stroke-copper" strokeWidth="4.5" />
+          <polyline {...shared} className="stroke-paper" strokeWidth="1.75" />
         </>
       )}
       {line.flow === "dc" && (
@@ -160,16 +180,8 @@ function Conductors({ line, keys }: { line: FigureLine; keys: readonly string[] 
           className="fill-copper"
         />
       )}
-      {keys.map((key, index) => (
-        <Balloon key={key} at={along(line, (index - (keys.length - 1) / 2) * 24)} text={key} />
-      ))}
     </g>
   );
-}
-
-function along({ middle: [x, y], middleAngleDeg }: FigureLine, distance: number): readonly [number, number] {
-  const angleRad = (middleAngleDeg * Math.PI) / 180;
-  return [x + distance * Math.cos(angleRad), y + distance * Math.sin(angleRad)];
 }
 
 function Balloon({ at: [x, y], text }: { at: readonly [number, number]; text: string }) {
@@ -183,21 +195,28 @@ function Balloon({ at: [x, y], text }: { at: readonly [number, number]; text: st
   );
 }
 
+type KeyedPosition = Position & { key: string };
+
 interface SensorMarkProps {
-  position: Position;
+  position: KeyedPosition;
   at: FigurePoint;
   label: FigureLabel;
 }
 
-function SensorMark({ position: { sensor, verdict, governing }, at: [x, y], label }: SensorMarkProps) {
-  const budgetUsed = governing?.budgetUsed ?? 0;
+function SensorMark({ position, at: [x, y], label }: SensorMarkProps) {
   const [textX, textY] = label.at;
+  const [name, budget] = labelLines(position);
   return (
     <g>
-      <title>{sensor.name}</title>
+      <title>{`${position.key} ${position.sensor.name}: ${budget}`}</title>
       <circle cx={x} cy={y} r={markSize / 2 + 1} className="fill-paper" />
       <svg x={x - markSize / 2} y={y - markSize / 2} width={markSize} height={markSize}>
-        <NeedleMark budgetUsed={budgetUsed} verdict={verdict} size={markSize} title="" />
+        <NeedleMark
+          budgetUsed={position.governing?.budgetUsed ?? 0}
+          verdict={position.verdict}
+          size={markSize}
+          title=""
+        />
       </svg>
       <g
         textAnchor={label.anchor}
@@ -207,11 +226,13 @@ function SensorMark({ position: { sensor, verdict, governing }, at: [x, y], labe
         paintOrder="stroke"
       >
         <text x={textX} y={textY} fontWeight="600">
-          {shortened(sensor.name)}
+          {label.short ? position.key : name}
         </text>
-        <text x={textX} y={textY + 16}>
-          {budgetWords(budgetUsed, verdict)}
-        </text>
+        {!label.short && (
+          <text x={textX} y={textY + 16}>
+            {budget}
+          </text>
+        )}
       </g>
     </g>
   );
@@ -219,11 +240,11 @@ function SensorMark({ position: { sensor, verdict, governing }, at: [x, y], labe
 
 const longestName = 30;
 
-const shortened = (name: string): string =>
-  name.length > longestName ? `${name.slice(0, longestName - 1).trimEnd()}…` : name;
-
-const budgetWords = (budgetUsed: number, verdict: string): string =>
-  `${formatBudget(budgetUsed)}, ${verdict}`;
+function labelLines({ key, sensor, verdict, governing }: KeyedPosition): [name: string, budget: string] {
+  const name =
+    sensor.name.length > longestName ? `${sensor.name.slice(0, longestName - 1).trimEnd()}…` : sensor.name;
+  return [`${key} ${name}`, `${formatBudget(governing?.budgetUsed ?? 0)}, ${verdict}`];
+}
 
 function ScaleBar({ frame }: { frame: FigureFrame }) {
   const lengthM = scaleBarM(frame);

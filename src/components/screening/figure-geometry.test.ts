@@ -4,7 +4,7 @@ import {
   type PlanDocument,
   planDocumentSchema,
 } from "~/domain/plan-document/plan-document";
-import { figureFrame, figureLines, imageCorners, placeLabels, scaleBarM } from "./figure-geometry";
+import { figureFrame, figureLines, imageCorners, scaleBarM } from "./figure-geometry";
 
 const circuit = (id: string, path: number[][], supply: object | null) => ({
   id,
@@ -30,7 +30,7 @@ describe("the plan figure", () => {
     const [x1, y1] = frame.place([20, 10]);
     expect((x1 - x0) / 20).toBeCloseTo((y0 - y1) / 10, 9);
     expect(y1).toBeLessThan(y0);
-    expect(frame.width).toBeCloseTo(960, 6);
+    expect(frame.width).toBeCloseTo(1200, 6);
   });
 
   it("draws circuits that share a way as one line, DC only where all of them are", () => {
@@ -83,40 +83,5 @@ describe("the plan figure", () => {
     expect(frame.width).toBeGreaterThan(0);
     expect(scaleBarM({ width: 960, height: 1, unitsPerM: 20, place: frame.place })).toBe(5);
     expect(scaleBarM({ width: 960, height: 1, unitsPerM: 100, place: frame.place })).toBe(1);
-  });
-
-  it("puts labels of neighbours on different sides, inside the figure", () => {
-    const [first, second, atEdge] = placeLabels(
-      [
-        { at: [100, 100], letters: 20 },
-        { at: [150, 100], letters: 20 },
-        { at: [940, 100], letters: 20 },
-      ],
-      [],
-      { width: 960 },
-      15,
-    );
-    expect(first?.anchor).toBe("middle");
-    expect(second?.anchor).toBe("start");
-    expect(atEdge?.anchor).toBe("end");
-  });
-
-  it("keeps labels off lines where it can", () => {
-    const wall = { flow: "dc" as const, circuitIds: [], middle: [0, 0] as const, middleAngleDeg: 0 };
-    const [label] = placeLabels(
-      [{ at: [400, 100], letters: 10 }],
-      [
-        {
-          ...wall,
-          points: [
-            [440, 0],
-            [440, 300],
-          ],
-        },
-      ],
-      { width: 960 },
-      15,
-    );
-    expect(label?.anchor).toBe("end");
   });
 });
