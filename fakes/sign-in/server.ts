@@ -6,7 +6,8 @@ import { createProvider, type SignInOptions } from "./provider";
 
 type Interaction = InstanceType<Provider["Interaction"]>;
 
-const pagePolicy = "default-src 'none'; style-src 'unsafe-inline'; frame-ancestors 'none'; base-uri 'none'";
+const pagePolicy =
+  "default-src 'none'; style-src 'unsafe-inline'; img-src data:; frame-ancestors 'none'; base-uri 'none'";
 
 /** The provider, with the page that shows the people to choose from. */
 export function createSignInServer(options: SignInOptions): Server {

@@ -1,5 +1,5 @@
 import { spawnSync } from "node:child_process";
-import { readFileSync, statSync } from "node:fs";
+import { lstatSync, readFileSync } from "node:fs";
 import { fileURLToPath } from "node:url";
 
 // Plain JavaScript with nothing but Node.js: it runs before the npm packages are there.
@@ -19,20 +19,32 @@ function checkNodeVersion() {
   process.exit(1);
 }
 
-function modifiedAtMs(path) {
+function packagesIn(lockfile) {
   try {
-    return statSync(inRepository(path)).mtimeMs;
+    return JSON.parse(readFileSync(inRepository(lockfile), "utf8")).packages;
   } catch {
     return undefined;
   }
 }
 
-/** npm writes both files in one go when it changes the lockfile, in either order. */
-const sameMomentMs = 10_000;
+/** Whether what npm says it installed last is what the lockfile wants; optional ones depend on the machine. */
+function isInstalled() {
+  const wanted = Object.entries(packagesIn("package-lock.json")).filter(([path]) => path !== "");
+  const present = packagesIn("node_modules/.package-lock.json");
+  if (present === undefined) return false;
+  return wanted.every(([path, { version, optional }]) =>
+    present[path] === undefined ? optional === true : present[path].version === version,
+  );
+}
 
 function installPackages() {
-  const installedAtMs = modifiedAtMs("node_modules/.package-lock.json");
-  if (installedAtMs !== undefined && installedAtMs + sameMomentMs > modifiedAtMs("package-lock.json")) return;
+  if (isInstalled()) return;
+  if (lstatSync(inRepository("node_modules"), { throwIfNoEntry: false })?.isSymbolicLink()) {
+    console.error(
+      "node_modules is a link to another folder, where these packages are not all installed. Remove the link and try again.",
+    );
+    process.exit(1);
+  }
   console.log("Installing npm packages …");
   // Development packages too, whatever NODE_ENV says: the build and the fakes are among them.
   const { status } = spawnSync("npm", ["ci", "--ignore-scripts", "--include=dev", "--no-progress"], {
