@@ -68,8 +68,11 @@ export const sensors: SensorInput[] = [
   },
   {
     id: "reed",
-    name: "Reed contact, lobby door",
-    position: [17.3, 7.7, 2],
-    limits: [{ id: "dc", kind: "static", limitT: 1e-3 }],
+    name: "Reed contact, riser shaft door",
+    position: [17.3, 3.6, 2],
+    limits: [
+      { id: "dc", kind: "static", limitT: 1e-3 },
+      { id: "ac", kind: "alternating", limitT: 1e-3, bandHz: [10, 1000] },
+    ],
   },
 ];
