@@ -41,7 +41,7 @@ export const panBy = (view: View, dxPx: number, dyPx: number): View => ({
 });
 
 /** The view that shows `bounds` whole, centred, with `marginPx` around. */
-export function fitTo(bounds: Bounds, size: SizePx, marginPx = 32): View {
+export function fitTo(bounds: Bounds, size: SizePx, marginPx = 44): View {
   const widthM = Math.max(bounds.maxX - bounds.minX, 0.5);
   const heightM = Math.max(bounds.maxY - bounds.minY, 0.5);
   const scale = clampScale(

@@ -11,7 +11,6 @@ export function InstructionLine() {
   const store = useSheetStore();
   const editable = useEditable();
   const { instruction, inputs, focus, name } = useSheet(({ session }) => session.step);
-  const announcement = useSheet(({ session }) => session.announcement);
   const line = useRef<HTMLDivElement>(null);
   useEffect(() => {
     if (focus !== null) line.current?.querySelector<HTMLElement>(`[name="step-${focus}"]`)?.focus();
@@ -19,7 +18,7 @@ export function InstructionLine() {
   return (
     <div
       ref={line}
-      className="flex flex-wrap items-end gap-x-4 gap-y-2 border-y border-rule bg-raised px-3 py-1.5"
+      className="flex min-h-17 flex-wrap items-end gap-x-4 gap-y-2 border-y border-rule bg-raised px-3 py-1.5"
     >
       <p
         id="instruction-line"
@@ -31,9 +30,6 @@ export function InstructionLine() {
         {editable
           ? instruction
           : "You see this plan read only: press on a sensor or a route to see what it is."}
-      </p>
-      <p className="sr-only" aria-live="polite">
-        {announcement}
       </p>
       {inputs.map((input) => (
         <LineInput key={`${name}-${input.id}`} input={input} />

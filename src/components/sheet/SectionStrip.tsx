@@ -5,12 +5,14 @@ import type { PlanDocument } from "~/domain/plan-document/plan-document";
 import { crossingsAt, heightRange, liftRun, profilesOf } from "~/sheet/section";
 import { itemOfPath, selectedOwners } from "~/sheet/selection";
 import { tidyM } from "~/sheet/geometry";
-import { toPlan } from "~/sheet/view";
+import { gridStepM, toPlan } from "~/sheet/view";
 import { HeightHandle } from "./HeightHandle";
 import { useEditable, useSelection, useSheet, useSheetStore, useShownDocument } from "./store";
 
 const heightPx = 168;
 const marginPx = 22;
+/** Height labels stand at least this far apart. */
+const labelApartPx = 17;
 /** Sensors nearer than this to the slice stand in it; others are left out. */
 const sliceDepthM = 0.75;
 
@@ -89,7 +91,7 @@ export function SectionStrip() {
         height={heightPx}
         className="block"
         role="group"
-        aria-label="Heights in the section"
+        aria-label="Section drawing"
       >
         <Scale
           lowM={lowM}
@@ -168,7 +170,7 @@ interface ScaleProps {
 
 /** The floor, a line for each metre of height, and ticks for each metre along the slice. */
 function Scale({ lowM, highM, px, py, width, centreX, scale }: ScaleProps) {
-  const everyM = highM - lowM > 12 ? 5 : 1;
+  const everyM = gridStepM(scale, labelApartPx);
   const heights: number[] = [];
   for (let z = Math.ceil(lowM / everyM) * everyM; z <= highM; z += everyM) heights.push(z);
   const along: number[] = [];

@@ -61,12 +61,10 @@ export function Sheet(props: Props) {
   );
 }
 
-type Shown = "drawing" | "tables";
-
 function Layout({ planId, planName, userId, mayEdit, mayScreen, siteEarth, start }: Props) {
   const store = useSheetStore();
   const editable = useEditable();
-  const [shown, setShown] = useState<Shown>("drawing");
+  const shown = useSheet((state) => state.shown);
   const [dialog, setDialog] = useState<"upload" | "schedule" | null>(null);
   const { state, autosave, keepsDrafts } = useAutosave({ store, planId, userId, saved: start.saved });
   const mine = useSheet(({ session }) => session.document);
@@ -77,12 +75,8 @@ function Layout({ planId, planName, userId, mayEdit, mayScreen, siteEarth, start
         <StepBar />
         <UndoButtons />
         <div role="group" aria-label="View" className="flex items-center gap-1">
-          <ViewButton shown={shown} name="drawing" onShow={setShown}>
-            Drawing
-          </ViewButton>
-          <ViewButton shown={shown} name="tables" onShow={setShown}>
-            Tables
-          </ViewButton>
+          <ViewButton name="drawing">Drawing</ViewButton>
+          <ViewButton name="tables">Tables</ViewButton>
           {editable && (
             <Button small onClick={() => setDialog("upload")}>
               Upload a drawing…
@@ -111,7 +105,8 @@ function Layout({ planId, planName, userId, mayEdit, mayScreen, siteEarth, start
           }}
         />
       )}
-      <InstructionLine />
+      {shown === "drawing" && <InstructionLine />}
+      <Announcement />
       <div className="grid min-h-0 flex-1 lg:grid-cols-[minmax(0,1fr)_26rem]">
         <div className="flex min-h-0 min-w-0 flex-col border-rule lg:border-r">
           {shown === "drawing" ? (
@@ -123,10 +118,7 @@ function Layout({ planId, planName, userId, mayEdit, mayScreen, siteEarth, start
             <Tables />
           )}
         </div>
-        <aside
-          aria-label="Ledger and properties"
-          className="grid min-h-0 min-w-0 lg:grid-rows-[minmax(10rem,1fr)_minmax(12rem,1fr)]"
-        >
+        <aside aria-label="Ledger and properties" className="flex min-h-0 min-w-0 flex-col">
           <LiveLedger />
           <SidePanel siteEarth={siteEarth} onOpenSchedule={() => setDialog("schedule")} />
         </aside>
@@ -137,20 +129,25 @@ function Layout({ planId, planName, userId, mayEdit, mayScreen, siteEarth, start
   );
 }
 
-interface ViewButtonProps {
-  shown: Shown;
-  name: Shown;
-  onShow: (name: Shown) => void;
-  children: string;
+/** Tells whoever can't see the sheet what the last edit was. */
+function Announcement() {
+  const announcement = useSheet(({ session }) => session.announcement);
+  return (
+    <p className="sr-only" aria-live="polite">
+      {announcement}
+    </p>
+  );
 }
 
-function ViewButton({ shown, name, onShow, children }: ViewButtonProps) {
+function ViewButton({ name, children }: { name: "drawing" | "tables"; children: string }) {
+  const store = useSheetStore();
+  const shown = useSheet((state) => state.shown);
   return (
     <button
       type="button"
       aria-pressed={shown === name}
       className="min-h-9 cursor-pointer border-b-2 border-transparent px-2 text-sm hover:border-rule-strong aria-pressed:border-accent aria-pressed:font-semibold"
-      onClick={() => onShow(name)}
+      onClick={() => store.update({ shown: name })}
     >
       {children}
     </button>
@@ -200,7 +197,12 @@ function LiveLedger() {
   const litId = useSheet((state) => state.litId);
   const [selected] = selection.filter((item) => item.kind === "sensor");
   return (
-    <div className="min-h-0 overflow-y-auto p-3" tabIndex={0} role="region" aria-label="Ledger of sensors">
+    <div
+      className="min-h-40 flex-1 overflow-y-auto p-3"
+      tabIndex={0}
+      role="region"
+      aria-label="Ledger of sensors"
+    >
       <Ledger
         document={document}
         live={live}

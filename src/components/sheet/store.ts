@@ -35,6 +35,8 @@ export interface FieldMapState {
 }
 
 export interface SheetState {
+  /** Which of the two ways to see the plan is on. */
+  shown: "drawing" | "tables";
   /** False for whoever may only read, and on screens too small to draw on. */
   editable: boolean;
   session: Session;
@@ -65,6 +67,7 @@ export class SheetStore {
     readonly phaseLabels: readonly string[],
   ) {
     this.state = {
+      shown: "drawing",
       editable,
       session,
       view: { scale: 40, x: 40, y: 400 },
@@ -112,6 +115,7 @@ export class SheetStore {
   }
 
   begin(begin: (around: Surroundings) => Step): void {
+    this.update({ shown: "drawing" });
     this.act((session, around) => sessions.beginStep(session, begin, around));
   }
 

@@ -40,6 +40,8 @@ export function Drawing({ planId }: { planId: string }) {
       if (unseen) fitView(store);
     });
     observer.observe(element);
+    // A step that was begun from the tables wants its keys here.
+    if (store.get().session.step.name !== "select") element.focus({ preventScroll: true });
     return () => observer.disconnect();
   }, [store]);
 

@@ -1,12 +1,13 @@
 import { useMemo } from "react";
 import type { PlanDocument } from "~/domain/plan-document/plan-document";
 import { positionsWorstFirst } from "~/domain/positions";
-import type { Verdict } from "~/domain/screening-result";
+import { VERDICTS, type Verdict } from "~/domain/screening-result";
 import { circuitsOn, ownedPaths, ownerOfCircuit, sameOwner, type OwnedPath } from "~/sheet/edits/paths";
+import { placeLabels } from "~/sheet/label-places";
 import { selectedOwners } from "~/sheet/selection";
 import { useSelection, useSheet, useShownDocument } from "../store";
 import { PathShape, type Carried } from "./PathShape";
-import { SensorShape } from "./SensorShape";
+import { radiusPx, SensorShape } from "./SensorShape";
 import { VertexHandles } from "./VertexHandles";
 import type { Palette } from "./use-palette";
 
@@ -38,6 +39,20 @@ export function PlanShapes({ scale, palette }: { scale: number; palette: Palette
     () => ownedPaths(document).map((owned) => ({ owned, carried: carriedBy(document, owned) })),
     [document],
   );
+  const labels = useMemo(() => {
+    const isSelected = (id: string) => selection.some((item) => item.kind === "sensor" && item.id === id);
+    const rank = (id: string): number =>
+      isSelected(id) ? -1 : -VERDICTS.indexOf(verdicts.get(id)?.verdict ?? "within");
+    const things = document.sensors
+      .map(({ id, name, position: [x, y] }) => ({
+        id,
+        text: name,
+        at: [x * scale, -y * scale] as const,
+        rank: rank(id),
+      }))
+      .sort((a, b) => a.rank - b.rank);
+    return placeLabels(things, { clearPx: radiusPx + 5, linePx: 16, letterPx: 7 });
+  }, [document.sensors, selection, verdicts, scale]);
   const chosen = selectedOwners(document, selection);
   const lit = document.circuits.find(({ id }) => id === litId);
   const litOwner = lit === undefined ? null : ownerOfCircuit(lit);
@@ -74,6 +89,7 @@ export function PlanShapes({ scale, palette }: { scale: number; palette: Palette
           scale={scale}
           palette={palette}
           selected={selection.some((item) => item.kind === "sensor" && item.id === sensor.id)}
+          labelAt={labels.get(sensor.id) ?? null}
         />
       ))}
     </>

@@ -3,6 +3,7 @@ import { Arc, Circle, Group, Line, Text } from "react-konva";
 import type { Sensor } from "~/domain/plan-document/sensor";
 import type { Verdict } from "~/domain/screening-result";
 import { needleAngleDeg } from "~/components/ui/needle-geometry";
+import type { Point2 } from "~/sheet/geometry";
 import type { Palette } from "./use-palette";
 
 interface Props {
@@ -13,13 +14,15 @@ interface Props {
   scale: number;
   palette: Palette;
   selected: boolean;
+  /** Upper left corner of the name beside the mark, px; null where there is no room for it. */
+  labelAt: Point2 | null;
 }
 
-const radiusPx = 12;
+export const radiusPx = 12;
 
 /** The mark of a sensor: a needle in a ring, tilting with the budget used. */
 export const SensorShape = memo(function SensorShape(props: Props) {
-  const { sensor, verdict, budgetUsed, scale, palette, selected } = props;
+  const { sensor, verdict, budgetUsed, scale, palette, selected, labelAt } = props;
   const colour = verdict === null ? palette.muted : palette[verdict];
   const over = verdict === "over";
   const needle = over ? palette.paper : palette.ink;
@@ -46,17 +49,19 @@ export const SensorShape = memo(function SensorShape(props: Props) {
         <Line points={[0, -9, 2.4, 0, -2.4, 0]} closed fill={needle} />
         <Line points={[0, 9, 2.4, 0, -2.4, 0]} closed stroke={needle} strokeWidth={1} />
       </Group>
-      <Text
-        x={radiusPx + 5}
-        y={-8}
-        text={sensor.name}
-        fontSize={14}
-        fontFamily="Source Sans 3"
-        fill={palette.ink}
-        stroke={palette.paper}
-        strokeWidth={3.5}
-        fillAfterStrokeEnabled
-      />
+      {labelAt !== null && (
+        <Text
+          x={labelAt[0]}
+          y={labelAt[1]}
+          text={sensor.name}
+          fontSize={14}
+          fontFamily="Source Sans 3"
+          fill={palette.ink}
+          stroke={palette.paper}
+          strokeWidth={3.5}
+          fillAfterStrokeEnabled
+        />
+      )}
     </Group>
   );
 });

@@ -2,7 +2,7 @@ import { memo } from "react";
 import { Group, Line, Shape, Text } from "react-konva";
 import { hatching, labelPlaces, type FieldLine } from "~/sheet/field-lines";
 import type { Palette } from "../canvas/use-palette";
-import { useMapLines, valueText, type MapLines } from "./use-field-map";
+import { useMapLines, levelText, type MapLines } from "./use-field-map";
 
 /** Labels stand this far apart, strokes of the hatching this far. */
 const labelApartPx = 120;
@@ -31,7 +31,7 @@ const Lines = memo(function Lines({
         <LevelLine
           key={line.level}
           line={line}
-          text={valueText(line.level, quantity)}
+          text={levelText(line.level, quantity)}
           scale={scale}
           palette={palette}
         />
@@ -66,7 +66,7 @@ const Lines = memo(function Lines({
           />
           <Labels
             line={limit}
-            text={`limit ${valueText(limit.level, quantity)}`}
+            text={`limit ${levelText(limit.level, quantity)}`}
             scale={scale}
             colour={palette.over}
             palette={palette}

@@ -8,7 +8,7 @@ import {
   type MapQuantity,
   type MapSettings,
 } from "../store";
-import { useMapLimit, valueText } from "./use-field-map";
+import { useMapLimit, levelText } from "./use-field-map";
 import { limitValue } from "~/domain/plan-document/sensor";
 
 const quantities: readonly { value: MapQuantity | "off"; label: string }[] = [
@@ -66,7 +66,7 @@ export function MapPanel() {
           <p className="text-xs text-muted">
             {limit === null
               ? "Select a sensor with a limit of this kind to see where that limit is exceeded."
-              : `The heavy line is the selected sensor’s limit, ${valueText(limitValue(limit), settings.quantity)}; the hatched side is to be kept out of.`}
+              : `The heavy line is the selected sensor’s limit, ${levelText(limitValue(limit), settings.quantity)}; the hatched side is to be kept out of.`}
           </p>
           {problem !== null && (
             <p className="message message-undecided" role="status">

@@ -1,4 +1,4 @@
-import { formatQuantity, quantityText, type QuantityUnit } from "~/domain/format";
+import { formatLimit, formatQuantity, quantityText, type QuantityUnit } from "~/domain/format";
 import { limitValue, type Limit } from "~/domain/plan-document/sensor";
 import { fieldLines, roundLevels, valueAt, type FieldGrid, type FieldLine } from "~/sheet/field-lines";
 import type { Point2 } from "~/sheet/geometry";
@@ -6,6 +6,10 @@ import { useMemo } from "react";
 import { useSelection, useSheet, useShownDocument, type MapQuantity } from "../store";
 
 export const unitOf = (quantity: MapQuantity): QuantityUnit => (quantity === "heading" ? "deg" : "T");
+
+/** A level or a limit: no zeros at its end. */
+export const levelText = (level: number, quantity: MapQuantity): string =>
+  formatLimit(level, unitOf(quantity));
 
 export const valueText = (value: number, quantity: MapQuantity): string =>
   quantityText(formatQuantity(value, unitOf(quantity)));

@@ -50,7 +50,7 @@ export function SidePanel({ siteEarth, onOpenSchedule }: Props) {
     document.getElementById(`${id}-${next}`)?.focus();
   };
   return (
-    <section aria-label="Properties" className="flex min-h-0 flex-col">
+    <section aria-label="Properties" className="flex min-h-0 flex-col lg:max-h-[58%]">
       <div
         role="tablist"
         aria-label="Properties"

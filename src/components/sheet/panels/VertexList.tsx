@@ -22,7 +22,7 @@ export function VertexList({ circuit }: { circuit: Circuit }) {
 
 const axes = ["x", "y", "z"] as const;
 
-export function Vertices({ owner, name }: { owner: PathOwner; name: string }) {
+export function Vertices({ owner, name, open = false }: { owner: PathOwner; name: string; open?: boolean }) {
   const store = useSheetStore();
   const editable = useEditable();
   const path = pathOf(useDocument(), owner);
@@ -32,7 +32,7 @@ export function Vertices({ owner, name }: { owner: PathOwner; name: string }) {
     return [(a[0] + b[0]) / 2, (a[1] + b[1]) / 2, (a[2] + b[2]) / 2];
   };
   return (
-    <details>
+    <details open={open}>
       <summary className="text-sm font-semibold">{path.length} vertices</summary>
       <table className="table mt-1">
         <caption className="sr-only">Vertices of {name}, metres</caption>

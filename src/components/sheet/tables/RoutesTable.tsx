@@ -22,19 +22,21 @@ export function RoutesTable() {
       {routes.map((route) => (
         <div key={route.id} className="border border-rule p-3" role="group" aria-label={route.name}>
           <div className="mb-2 flex flex-wrap items-center gap-3 text-sm">
-            <CellInput
-              label={`Name of route ${route.name}`}
-              value={route.name}
-              disabled={!editable}
-              onCommit={(name) => {
-                if (name.length > 300) return "At most 300 letters.";
-                store.edit(`Name of ${route.name}`, (whole) => ({
-                  ...whole,
-                  routes: whole.routes.map((other) => (other.id === route.id ? { ...other, name } : other)),
-                }));
-                return null;
-              }}
-            />
+            <div className="w-56">
+              <CellInput
+                label={`Name of route ${route.name}`}
+                value={route.name}
+                disabled={!editable}
+                onCommit={(name) => {
+                  if (name.length > 300) return "At most 300 letters.";
+                  store.edit(`Name of ${route.name}`, (whole) => ({
+                    ...whole,
+                    routes: whole.routes.map((other) => (other.id === route.id ? { ...other, name } : other)),
+                  }));
+                  return null;
+                }}
+              />
+            </div>
             <span className="text-muted">
               {pathLengthM(route.path).toFixed(2)} m, circuits:{" "}
               {circuits
@@ -53,7 +55,7 @@ export function RoutesTable() {
               </Button>
             )}
           </div>
-          <Vertices owner={{ list: "routes", id: route.id }} name={route.name} />
+          <Vertices owner={{ list: "routes", id: route.id }} name={route.name} open />
         </div>
       ))}
       {editable && (
