@@ -1,4 +1,4 @@
-import { useState } from "react";
+import { useEffect, useState } from "react";
 import { z } from "zod";
 import { ApiRefusal, callApi } from "~/client/api";
 import { Button } from "~/components/ui/Button";
@@ -30,7 +30,20 @@ export function NoticeComposer({ api, coveringText, recipients, contacts, siteUr
   const [savedCount, setSavedCount] = useState(0);
   const [busy, setBusy] = useState(false);
   const [asking, setAsking] = useState(false);
+  const [dirty, setDirty] = useState(false);
   const chosen = chosenRecipients(addressees);
+
+  useEffect(() => {
+    if (!dirty) return;
+    const keep = (event: BeforeUnloadEvent) => event.preventDefault();
+    addEventListener("beforeunload", keep);
+    return () => removeEventListener("beforeunload", keep);
+  }, [dirty]);
+
+  function edited(): void {
+    setDirty(true);
+    setMessage(null);
+  }
 
   async function attempt(work: () => Promise<void>): Promise<void> {
     setBusy(true);
@@ -50,6 +63,7 @@ export function NoticeComposer({ api, coveringText, recipients, contacts, siteUr
 
   const save = async () => {
     await callApi(api, anything, { method: "PATCH", body: { coveringText: text, recipients: chosen } });
+    setDirty(false);
     setSavedCount((count) => count + 1);
   };
   const issue = async () => {
@@ -60,7 +74,15 @@ export function NoticeComposer({ api, coveringText, recipients, contacts, siteUr
 
   return (
     <div className="grid gap-8">
-      <AddresseeList addressees={addressees} faults={faults} siteUrl={siteUrl} onChange={setAddressees} />
+      <AddresseeList
+        addressees={addressees}
+        faults={faults}
+        siteUrl={siteUrl}
+        onChange={(changed) => {
+          setAddressees(changed);
+          edited();
+        }}
+      />
       <FieldFrame
         id="coveringText"
         label="Covering text"
@@ -73,7 +95,10 @@ export function NoticeComposer({ api, coveringText, recipients, contacts, siteUr
           rows={7}
           maxLength={coveringTextMaxLength}
           value={text}
-          onChange={(event) => setText(event.target.value)}
+          onChange={(event) => {
+            setText(event.target.value);
+            edited();
+          }}
           aria-describedby={describedBy("coveringText", true)}
         />
       </FieldFrame>

@@ -74,7 +74,7 @@ export function PlanFigure({ document, result, imageUrl, label, width }: Props) 
             className="fill-none stroke-ink"
             strokeWidth="1.5"
           />
-          <ZoneName outline={outline} frame={frame} name={name} />
+          {imageUrl === undefined && <ZoneName outline={outline} frame={frame} name={name} />}
         </g>
       ))}
       {lines.map((line) => (
@@ -252,6 +252,7 @@ function ScaleBar({ frame }: { frame: FigureFrame }) {
   const end = 16 + lengthM * frame.unitsPerM;
   return (
     <g className="stroke-ink">
+      <rect x="8" y={y - 14} width={end + 56} height="24" className="fill-paper" stroke="none" />
       <path d={`M16 ${y - 5} V${y} H${end} V${y - 5}`} fill="none" />
       <text x={end + 8} y={y + 2} className="fill-ink" stroke="none">{`${lengthM} m`}</text>
     </g>

@@ -84,4 +84,27 @@ describe("the plan figure", () => {
     expect(scaleBarM({ width: 960, height: 1, unitsPerM: 20, place: frame.place })).toBe(5);
     expect(scaleBarM({ width: 960, height: 1, unitsPerM: 100, place: frame.place })).toBe(1);
   });
+
+  it("shows some of the image around what is drawn, but no more than there is", () => {
+    const sheet = {
+      drawingId: "d",
+      widthPx: 1000,
+      heightPx: 500,
+      originPx: [0, 500],
+      metresPerPixel: 0.1,
+      rotationDeg: 0,
+    };
+    const path = [
+      [40, 2, 2],
+      [60, 20, 2],
+    ];
+    const frame = figureFrame(
+      plan({ circuits: [circuit("c1", path, { kind: "dc", currentA: 1 })], drawing: { sheet } }),
+    );
+    expect(frame.place([34, 26])).toEqual([56, 56]);
+    expect(frame.place([66, 0])).toEqual([
+      expect.closeTo(frame.width - 56, 6),
+      expect.closeTo(frame.height - 56, 6),
+    ]);
+  });
 });

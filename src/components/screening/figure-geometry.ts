@@ -44,22 +44,50 @@ export function imageCorners({ sheet }: PlanDocument["drawing"]): FigurePoint[] 
   });
 }
 
-/** A frame that holds everything drawn, with the image around it; `figureWidth` units wide or three quarters of that high, whichever is reached first. */
-export function figureFrame(document: PlanDocument, figureWidth = fullWidth): FigureFrame {
-  const drawn: (readonly number[])[] = [
+/** How far the uploaded image is shown beyond what is drawn on it. */
+const imageAroundM = 6;
+
+interface Extent {
+  left: number;
+  right: number;
+  bottom: number;
+  top: number;
+}
+
+function extentOf(points: readonly (readonly number[])[]): Extent | null {
+  if (points.length === 0) return null;
+  const extent = { left: Infinity, right: -Infinity, bottom: Infinity, top: -Infinity };
+  for (const [x = 0, y = 0] of points) {
+    extent.left = Math.min(extent.left, x);
+    extent.right = Math.max(extent.right, x);
+    extent.bottom = Math.min(extent.bottom, y);
+    extent.top = Math.max(extent.top, y);
+  }
+  return extent;
+}
+
+/** What is drawn, with the image around it as far as it goes. */
+function shownExtent(document: PlanDocument): Extent {
+  const drawn = extentOf([
     ...document.sensors.map(({ position }) => position),
     ...document.equipment.map(({ centre }) => centre),
     ...document.routes.flatMap(({ path }) => path),
     ...document.circuits.flatMap(({ path }) => path ?? []),
     ...(document.drawing.zones ?? []).flatMap(({ outline }) => outline),
-  ];
-  const points = drawn.length === 0 ? imageCorners(document.drawing) : drawn;
-  const xs = points.map(([x = 0]) => x);
-  const ys = points.map(([, y = 0]) => y);
-  const least = (list: number[]) => list.reduce((a, b) => Math.min(a, b), Infinity);
-  const most = (list: number[]) => list.reduce((a, b) => Math.max(a, b), -Infinity);
-  const [left, right, bottom, top] =
-    points.length === 0 ? [0, 10, 0, 6] : [least(xs), most(xs), least(ys), most(ys)];
+  ]);
+  const image = extentOf(imageCorners(document.drawing));
+  if (drawn === null || image === null) return drawn ?? image ?? { left: 0, right: 10, bottom: 0, top: 6 };
+  return {
+    left: Math.min(drawn.left, Math.max(image.left, drawn.left - imageAroundM)),
+    right: Math.max(drawn.right, Math.min(image.right, drawn.right + imageAroundM)),
+    bottom: Math.min(drawn.bottom, Math.max(image.bottom, drawn.bottom - imageAroundM)),
+    top: Math.max(drawn.top, Math.min(image.top, drawn.top + imageAroundM)),
+  };
+}
+
+/** A frame that holds everything drawn, `figureWidth` units wide or three quarters of that high, whichever is reached first. */
+export function figureFrame(document: PlanDocument, figureWidth = fullWidth): FigureFrame {
+  const { left, right, bottom, top } = shownExtent(document);
   const widthM = Math.max(right - left, 1);
   const heightM = Math.max(top - bottom, 1);
   const unitsPerM = Math.min(
