@@ -9,6 +9,7 @@ import { SEGMENT_STRIDE } from "~/field/segment";
 import { distance, type Vector } from "~/field/vector";
 import { conductorCurrents, type ConductorCurrents } from "./conductor-currents";
 import { slotsOf, spaced } from "./slots";
+import { twistedSets } from "./twisted-sets";
 import { SPACING_STEP, type CircuitItem, type DrawnConductor, type Drive } from "./source-item";
 
 export type CompiledCircuit =
@@ -26,7 +27,9 @@ export function compileCircuit(
   const laid = layConductors(arrangement, carriers, frames);
   if (!laid.ok) return { ok: false, fault: { path, message: laid.message } };
   const respaced = circuit.spacingTolerancePercent > 0 ? respacedSets(circuit, carriers, frames) : null;
-  const sets = setsOf(laid.conductors, carriers, circuit.conductorRadiusM);
+  const sets = setsFor(circuit, arrangement, carriers, frames);
+  if (!sets)
+    return { ok: false, fault: { path, message: "the parallel sets do not fit the bends of the path" } };
   const centreLine = isSingle(circuit.arrangement) ? null : centreLineSet(frames, circuit.conductorRadiusM);
   const item: CircuitItem = {
     kind: "circuit",
@@ -40,7 +43,9 @@ export function compileCircuit(
     centreLine,
     respaced,
     legs: frames.legs,
+    // A twisted pair's conductors depend on where they are seen from; for the checks they run as drawn, untwisted.
     conductors: laid.conductors,
+    twisted: arrangement.kind === "twisted-pair",
     conductorRadiusM: circuit.conductorRadiusM,
     bends: frames.legs.slice(1).map(({ start }) => start),
   };
@@ -67,15 +72,24 @@ function setsOf(conductors: DrawnConductor[], carriers: Carrier[], radiusM: numb
   });
 }
 
+function setsFor(
+  { conductorRadiusM }: ResolvedCircuit,
+  arrangement: Arrangement,
+  carriers: Carrier[],
+  frames: SectionFrames,
+): ConductorSet[] | null {
+  if (arrangement.kind === "twisted-pair")
+    return twistedSets(arrangement, carriers, frames, conductorRadiusM);
+  const laid = layConductors(arrangement, carriers, frames);
+  return laid.ok ? setsOf(laid.conductors, carriers, conductorRadiusM) : null;
+}
+
 function respacedSets(
   circuit: ResolvedCircuit,
   carriers: Carrier[],
   frames: SectionFrames,
 ): CircuitItem["respaced"] {
-  const setsAt = (factor: number) => {
-    const laid = layConductors(spaced(circuit.arrangement, factor), carriers, frames);
-    return laid.ok ? setsOf(laid.conductors, carriers, circuit.conductorRadiusM) : null;
-  };
+  const setsAt = (factor: number) => setsFor(circuit, spaced(circuit.arrangement, factor), carriers, frames);
   const wider = setsAt(1 + SPACING_STEP);
   const narrower = setsAt(1 - SPACING_STEP);
   return wider && narrower && { wider, narrower };

@@ -2,6 +2,7 @@ import type { DocumentFault } from "~/domain/plan-document/parse";
 import type { ResolvedCircuit, ResolvedPlanDocument } from "~/domain/plan-document/resolved";
 import { boundItems, type BoundItem } from "./bounds";
 import { compileCircuit } from "./compile-circuit";
+import { compileEquipment } from "./compile-equipment";
 import { frequencyClasses, GroupTable, type FrequencyTable } from "./frequency-classes";
 import { RefusedDocumentError } from "./refusal";
 import { routeLines, type RouteLines } from "./route-lines";
@@ -71,6 +72,10 @@ export function compilePlan(document: ResolvedPlanDocument): CompiledPlan {
     }
     segments += compiled.segments;
     items.push(compiled.item);
+  });
+  document.equipment.forEach((equipment, index) => {
+    const item = compileEquipment(equipment, `equipment[${index}]`);
+    if (item) items.push(item);
   });
   if (segments > MAX_SEGMENTS) {
     const message = `${segments} straight conductor segments; at most ${MAX_SEGMENTS} are screened at once. Split the plan by area`;

@@ -9,7 +9,6 @@ import { planEarth, type PlanEarth } from "./earth";
 import { componentPhasors, influenceAt } from "./influence";
 import { caseFactors, type CaseFactors } from "./load-cases";
 import { limitMeasure, type LimitMeasure } from "./measures/measure-of";
-import { notYetComputed } from "./not-yet-computed";
 import { RefusedDocumentError } from "./refusal";
 import { sumGroups } from "./sensor-field";
 import { runSteps, type ScreenOptions, type Steps } from "./steps";
@@ -77,8 +76,6 @@ export function fieldMap(
 
 /** The same in steps, one a row. */
 export function* fieldMapSteps(document: PlanDocument, request: FieldMapRequest): Steps<FieldMap> {
-  const refused = notYetComputed(document);
-  if (refused.length > 0) throw new RefusedDocumentError(refused);
   const resolved = resolveDefaults(document);
   const earth = planEarth(resolved);
   if (request.quantity === "heading" && !earth) {

@@ -5,7 +5,7 @@ import { fieldReport } from "./field-report";
 import type { LimitJudging } from "./judging";
 import { caseFactors, swingFactors, type CaseFactors } from "./load-cases";
 import type { Measured, MeasuredState } from "./measures/measure";
-import type { Uncertainty } from "./uncertainty/uncertainty";
+import type { Uncertainty, UncertaintyOf } from "./uncertainty/uncertainty";
 import { cappedVerdict, guardedVerdict } from "./verdict";
 
 interface Candidate {
@@ -17,16 +17,7 @@ interface Candidate {
 }
 
 /** Judges a limit in every load case; the greatest (verdict, value + U) governs, the first on a tie. */
-export function judgeLimit(
-  judging: LimitJudging,
-  capped: boolean,
-  uncertaintyOf: (
-    judging: LimitJudging,
-    factors: CaseFactors,
-    state: MeasuredState,
-    measured: Measured,
-  ) => Uncertainty,
-): Finding {
+export function judgeLimit(judging: LimitJudging, capped: boolean, uncertaintyOf: UncertaintyOf): Finding {
   const { limit } = judging;
   const bound = limitValue(limit);
   const candidates = casesOf(judging).map((factors): Candidate => {

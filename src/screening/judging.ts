@@ -16,6 +16,7 @@ export class SensorJudging {
   readonly field: SensorField;
   readonly bounds: BoundField;
   private readonly families = new Map<3 | 9, InputFamily[]>();
+  private near: number[] | null = null;
   private readonly strays = new Map<3 | 9, StrayInput[]>();
 
   constructor(
@@ -33,6 +34,12 @@ export class SensorJudging {
     const families = sensorFamilies(this.field, width, this.sensor.positionToleranceM);
     this.families.set(width, families);
     return families;
+  }
+
+  /** Items that position tolerances move by more than first order tells; found once. */
+  nearItems(find: () => number[]): number[] {
+    this.near ??= find();
+    return this.near;
   }
 
   straysFor(width: 3 | 9): StrayInput[] {

@@ -89,17 +89,17 @@ describe("screen", () => {
               [5000, 0, 0],
               [-5000, 0, 0],
             ],
-            supply: { kind: "dc", currentA: 9 },
+            supply: { kind: "dc", currentA: 5 },
           },
         ],
         {},
       );
-    expect(pairUp("g").expandedUncertainty).toBeCloseTo((0.2 * wire(1, 1)) / Math.sqrt(3), 11);
+    expect(pairUp("g").expandedUncertainty).toBeCloseTo((0.2 * wire(5, 1)) / Math.sqrt(3), 11);
     expect(pairUp(null).expandedUncertainty).toBeCloseTo(
-      (0.2 * wire(Math.hypot(10, 9), 1)) / Math.sqrt(3),
+      (0.2 * wire(Math.hypot(10, 5), 1)) / Math.sqrt(3),
       10,
     );
-    expect(pairUp("g").contributions.map(({ part }) => Math.round(part))).toEqual([10, -9]);
+    expect(pairUp("g").contributions.map(({ part }) => Math.round(part))).toEqual([2, -1]);
   });
 
   it("lets the load case with the greatest verdict and reach govern", () => {

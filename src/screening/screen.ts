@@ -4,7 +4,7 @@ import { worstVerdict, type ScreeningResult, type SensorResult } from "~/domain/
 import { resolveDefaults } from "~/domain/plan-document/resolved";
 import { circulationError } from "./checks/circulation-check";
 import { openEnds, openEndText } from "./checks/open-ends";
-import { PositionChecks } from "./checks/position-warnings";
+import { checkPosition } from "./checks/position-warnings";
 import { compilePlan, type CompiledPlan, type WaitingCircuit } from "./compile";
 import { earthWarnings, planEarth, type PlanEarth } from "./earth";
 import { ENGINE_VERSION } from "./engine-version";
@@ -12,10 +12,8 @@ import { hashOfResolved } from "./input-hash";
 import { judgeLimit } from "./judge-limit";
 import { LimitJudging, SensorJudging } from "./judging";
 import { leftOut } from "./left-out";
-import { notYetComputed } from "./not-yet-computed";
-import { RefusedDocumentError } from "./refusal";
 import { runSteps, type ScreenOptions, type Steps } from "./steps";
-import { uncertaintyOf } from "./uncertainty/uncertainty";
+import { uncertaintiesOf, type UncertaintyOf } from "./uncertainty/uncertainty";
 import { cappedVerdict } from "./verdict";
 
 /**
@@ -28,22 +26,20 @@ export function screen(document: PlanDocument, options: ScreenOptions = {}): Scr
 
 /** The same in steps, one a sensor, so that a worker can look at its messages between them. */
 export function* screenSteps(document: PlanDocument): Steps<ScreeningResult> {
-  const refused = notYetComputed(document);
-  if (refused.length > 0) throw new RefusedDocumentError(refused);
   const resolved = resolveDefaults(document);
   const earth = planEarth(resolved);
   const plan = compilePlan(resolved);
   const hash = hashOfResolved(resolved);
   const waiting = plan.waiting.length > 0;
-  const positions = new PositionChecks(plan);
   const warnings = [...plan.waiting.map(waitingText), ...plan.warnings, ...earthWarnings(earth)];
 
   const sensors: SensorResult[] = [];
   for (const sensor of resolved.sensors) {
     yield { done: sensors.length, total: resolved.sensors.length };
-    const position = positions.check(sensor);
+    const position = checkPosition(plan, sensor);
     warnings.push(...position.warnings);
-    sensors.push(screenSensor(plan, sensor, earth, waiting || position.capped));
+    const uncertaintyOf = uncertaintiesOf(hash, sensors.length);
+    sensors.push(screenSensor(plan, sensor, earth, waiting || position.capped, uncertaintyOf));
   }
   yield { done: sensors.length, total: sensors.length };
 
@@ -70,6 +66,7 @@ function screenSensor(
   sensor: Sensor,
   earth: PlanEarth | null,
   capped: boolean,
+  uncertaintyOf: UncertaintyOf,
 ): SensorResult {
   const judging = new SensorJudging(plan, sensor, earth);
   const findings = sensor.limits.map((limit) =>

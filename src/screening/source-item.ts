@@ -38,6 +38,7 @@ export interface CircuitItem {
   respaced: { wider: ConductorSet[]; narrower: ConductorSet[] } | null;
   legs: Leg[];
   conductors: DrawnConductor[];
+  twisted: boolean;
   conductorRadiusM: number;
   /** Places where the path bends, metres. */
   bends: Vector[];

@@ -16,7 +16,7 @@ const RADIUS_SHARES = [0.4, 0.2, 0.1, 0.05, 0.025];
  * them. Returns the largest error relative to μ₀ times the largest single current, null where nothing flows.
  */
 export function circulationError(plan: CompiledPlan): number | null {
-  const checked = plan.items.map((item) => item.kind === "circuit" && item.conductors.length > 0);
+  const checked = plan.items.map((item) => item.kind === "circuit" && !item.twisted);
   const components = plan.components.filter(({ item }) => checked[item]);
   const largestA = Math.max(0, ...components.map(largestCurrentA));
   if (largestA === 0) return null;

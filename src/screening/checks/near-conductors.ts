@@ -1,8 +1,20 @@
 import { distance, distanceToLeg, type Vector } from "~/field/vector";
 import type { CircuitItem } from "../source-item";
 
+const reaches = new WeakMap<CircuitItem, number>();
+
+/** `reachM`, computed once an item. */
+export function reachOf(item: CircuitItem): number {
+  let reach = reaches.get(item);
+  if (reach === undefined) {
+    reach = reachM(item);
+    reaches.set(item, reach);
+  }
+  return reach;
+}
+
 /** How far conductors of a circuit may stand off its centre line, mitres of up to 120° included, metres. */
-export function reachM({ conductors, legs }: CircuitItem): number {
+function reachM({ conductors, legs }: CircuitItem): number {
   let reach = 0;
   for (const { points } of conductors) {
     for (const point of points.slice(1, -1)) {

@@ -1,5 +1,10 @@
 import type { Component } from "../compile";
 
+/** What a family's inputs are: currents, spacings, circuits' places along u and v, the sensor's place on x, y and z. */
+export type FamilyKind = "current" | "spacing" | "u" | "v" | "x" | "y" | "z";
+
+export const SENSOR_AXES = ["x", "y", "z"] as const;
+
 /**
  * Inputs of one kind that are uncertain, by the components they move. `vectors` holds per component (stride numbers, load
  * factor 1) the change of its phasors by one standard uncertainty; components with the same key move together; −1: none.
@@ -9,8 +14,7 @@ export interface InputFamily {
   stride: 6 | 18;
   keys: Int32Array;
   keyCount: number;
-  /** Set where the sensor itself moves, along x, y or z. */
-  axis?: 0 | 1 | 2;
+  kind: FamilyKind;
 }
 
 /** Rectangular distribution of half-width a: u = a/√3 (JCGM 100, 4.3.7). */

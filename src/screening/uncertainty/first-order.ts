@@ -1,7 +1,7 @@
 import type { LimitJudging } from "../judging";
 import type { CaseFactors } from "../load-cases";
 import type { Measured, MeasuredState } from "../measures/measure";
-import { effectsOf, RECTANGULAR } from "./families";
+import { effectsOf, RECTANGULAR, SENSOR_AXES } from "./families";
 import { strayEffect } from "./stray";
 
 /** Standard uncertainty of a measured value to first order (JCGM 100): root of the sum of the squared effects of all inputs. */
@@ -15,10 +15,9 @@ export function standardUncertainty(
   let variance = boundToleranceVariance(judging, factors, measured);
   for (const family of at.familiesFor(measure.width)) {
     const effects = effectsOf(family, at.plan.components, factors.items, included, measured.slope);
-    if (family.axis !== undefined) {
-      // The sensor's own place moves the bounds as well.
-      effects[0] = (effects[0] as number) + boundDisplacement(judging, factors, measured, family.axis);
-    }
+    const axis = SENSOR_AXES.findIndex((name) => name === family.kind);
+    // The sensor's own place moves the bounds as well.
+    if (axis >= 0) effects[0] = (effects[0] as number) + boundDisplacement(judging, factors, measured, axis);
     for (const effect of effects) variance += effect * effect;
   }
   for (const stray of at.straysFor(measure.width)) {
@@ -46,7 +45,7 @@ function boundDisplacement(
   judging: LimitJudging,
   factors: CaseFactors,
   measured: Measured,
-  axis: 0 | 1 | 2,
+  axis: number,
 ): number {
   const { at, measure } = judging;
   const power = measure.width === 3 ? 3 : 4;
@@ -61,7 +60,7 @@ function boundDisplacement(
 }
 
 /** A background's stated expanded uncertainty is two standard uncertainties of its magnitude. */
-function backgroundVariance({ at, background, limit }: LimitJudging, measured: Measured): number {
+export function backgroundVariance({ at, background, limit }: LimitJudging, measured: Measured): number {
   const stated = at.sensor.background?.expandedUncertaintyT ?? 0;
   if (stated === 0 || limit.kind === "swing" || limit.kind === "gradient") return 0;
   const dc = background.staticT.some((component) => component !== 0)

@@ -1,11 +1,11 @@
-import { nearestLeg } from "~/field/section-frames";
+import { nearestLeg, type Leg } from "~/field/section-frames";
 import type { Vector } from "~/field/vector";
 import type { CompiledPlan } from "../compile";
 import { componentPhasors } from "../influence";
 import { gradientPhasorsAt, type SensorField } from "../sensor-field";
 import { SPACING_STEP, type CircuitItem, type SourceItem } from "../source-item";
 import { displacementDerivatives } from "./displacement";
-import { keyed, RECTANGULAR, type InputFamily } from "./families";
+import { keyed, RECTANGULAR, SENSOR_AXES, type InputFamily } from "./families";
 
 /**
  * All uncertain inputs at one sensor that move phasors: currents and equipment tolerances, circuits' spacings and places,
@@ -43,7 +43,7 @@ function currentFamily(field: SensorField, width: 3 | 9): InputFamily {
     const component = plan.components[Math.floor(i / stride)];
     return value * toleranceOf(component && plan.items[component.item]) * 0.01 * RECTANGULAR;
   });
-  return { vectors, stride, ...keys };
+  return { vectors, stride, kind: "current", ...keys };
 }
 
 function toleranceOf(item: SourceItem | undefined): number {
@@ -56,7 +56,7 @@ function spacingFamily({ plan, position }: SensorField, width: 3 | 9): InputFami
   const keys = keyed(plan.components, ({ item }) =>
     circuitOf(plan.items[item])?.respaced ? `item ${item}` : null,
   );
-  if (keys.keyCount === 0) return { vectors: new Float64Array(0), stride, ...keys };
+  if (keys.keyCount === 0) return { vectors: new Float64Array(0), stride, kind: "spacing", ...keys };
   const wider = respacedPhasors(plan, position, width, "wider");
   const narrower = respacedPhasors(plan, position, width, "narrower");
   const vectors = wider.map((value, i) => {
@@ -64,7 +64,7 @@ function spacingFamily({ plan, position }: SensorField, width: 3 | 9): InputFami
     const half = ((item?.circuit.spacingTolerancePercent ?? 0) * 0.01 * RECTANGULAR) / (2 * SPACING_STEP);
     return (value - (narrower[i] as number)) * half;
   });
-  return { vectors, stride, ...keys };
+  return { vectors, stride, kind: "spacing", ...keys };
 }
 
 function respacedPhasors(
@@ -99,11 +99,7 @@ function placeFamilies(field: SensorField, derivatives: Float64Array[], width: 3
     if (!source || source.circuit.positionToleranceM === 0) return null;
     return source.circuit.route ? `route ${source.circuit.route.id}` : `item ${item}`;
   });
-  const legs = plan.items.map((item) => {
-    const source = circuitOf(item);
-    if (!source || source.circuit.positionToleranceM === 0) return null;
-    return nearestLeg(legsOf(plan, source), position).leg;
-  });
+  const legs = plan.items.map((item) => frameOf(plan, item, position));
   return (["u", "v"] as const).map((axis) => {
     const vectors = new Float64Array(stride * plan.components.length);
     plan.components.forEach(({ item }, component) => {
@@ -115,8 +111,15 @@ function placeFamilies(field: SensorField, derivatives: Float64Array[], width: 3
         vectors[i] = shift * directional(derivatives, direction, i);
       }
     });
-    return { vectors, stride, ...keys };
+    return { vectors, stride, kind: axis, ...keys };
   });
+}
+
+/** The frame along which a circuit's place is uncertain; null where it is certain. */
+export function frameOf(plan: CompiledPlan, item: SourceItem, position: Vector): Leg | null {
+  const source = circuitOf(item);
+  if (!source || source.circuit.positionToleranceM === 0) return null;
+  return nearestLeg(legsOf(plan, source), position).leg;
 }
 
 function legsOf(plan: CompiledPlan, item: CircuitItem) {
@@ -143,6 +146,6 @@ function sensorPlaceFamilies(
     stride: strideOf(width),
     keys,
     keyCount: 1,
-    axis: axis as 0 | 1 | 2,
+    kind: SENSOR_AXES[axis] ?? "z",
   }));
 }

@@ -3,6 +3,9 @@ import type { LimitJudging } from "../judging";
 import type { CaseFactors } from "../load-cases";
 import type { Measured, MeasuredState } from "../measures/measure";
 import { standardUncertainty } from "./first-order";
+import { isResolved, nearBounds, nearItems } from "./linearity";
+import { monteCarloUncertainty } from "./monte-carlo";
+import { randomStream } from "./random";
 
 export interface Uncertainty {
   /** Expanded uncertainty in the limit's unit. */
@@ -10,17 +13,33 @@ export interface Uncertainty {
   method: Finding["uncertaintyMethod"];
 }
 
-/** Coverage factor of first-order uncertainties. */
-const COVERAGE = 2;
-
-export function uncertaintyOf(
+export type UncertaintyOf = (
   judging: LimitJudging,
   factors: CaseFactors,
   state: MeasuredState,
   measured: Measured,
-): Uncertainty {
-  return {
-    expanded: COVERAGE * standardUncertainty(judging, factors, state, measured),
-    method: "first-order",
+) => Uncertainty;
+
+/** Coverage factor of first-order uncertainties. */
+const COVERAGE = 2;
+
+/**
+ * Uncertainties of one sensor's limits: to first order where that is safe, by Monte Carlo where a position tolerance is above a fifth
+ * of the distance to a conductor, or where the field compared is not clear of its own spread. Seeded by the input hash.
+ */
+export function uncertaintiesOf(inputHash: string, sensorIndex: number): UncertaintyOf {
+  const seed = inputHash.replace("sha256:", "");
+  return (judging, factors, state, measured) => {
+    const { plan, sensor } = judging.at;
+    const near = judging.at.nearItems(() => nearItems(plan, sensor));
+    const safe = near.length === 0 && !nearBounds(plan, sensor) && isResolved(judging, factors, state);
+    if (safe) {
+      return {
+        expanded: COVERAGE * standardUncertainty(judging, factors, state, measured),
+        method: "first-order",
+      };
+    }
+    const expanded = monteCarloUncertainty(judging, factors, measured, near, randomStream(seed, sensorIndex));
+    return { expanded, method: "monte-carlo" };
   };
 }

@@ -1,0 +1,139 @@
+import type { LimitJudging } from "../judging";
+import type { CaseFactors } from "../load-cases";
+import { product, type Measured, type MeasuredState } from "../measures/measure";
+import type { PlanEarth } from "../earth";
+import { sumGroups } from "../sensor-field";
+import { RECTANGULAR } from "./families";
+import { backgroundVariance } from "./first-order";
+import { inputVectors, type InputVector } from "./input-vectors";
+import { NearItems, type DrawOf } from "./near-items";
+import type { RandomStream } from "./random";
+
+export const DRAWS = 5000;
+/** Point of the distribution that value + U reaches. */
+const QUANTILE = 0.975;
+/** Inputs that together make less than this share of the variance are drawn as one. */
+const LUMPED_SHARE = 1e-6;
+
+/**
+ * Expanded uncertainty by Monte Carlo (JCGM 101): all inputs are drawn, items in `near` are computed anew where each draw puts them,
+ * the rest moves linearly; value + U is the 97.5 % point of the values drawn.
+ */
+export function monteCarloUncertainty(
+  judging: LimitJudging,
+  factors: CaseFactors,
+  measured: Measured,
+  near: readonly number[],
+  random: RandomStream,
+): number {
+  const { plan, earth, sensor } = judging.at;
+  const nearSet = new Set(near);
+  const base = baseGroups(judging, factors, nearSet);
+  const inputs = inputVectors(judging, factors, measured.slope, nearSet).filter(
+    (input) => needed(input) || near.length > 0,
+  );
+  const drawn = droppingSmall(inputs, near.length > 0);
+  const nearItems = near.length > 0 ? new NearItems(judging, near) : null;
+  const backgroundSigma = Math.sqrt(backgroundVariance(judging, measured));
+  const bounds = new BoundDraws(judging, factors);
+  const values = new Float64Array(DRAWS);
+  const groups = new Float64Array(base.length);
+  const draws = new Map<string, number>();
+
+  for (let i = 0; i < DRAWS; i++) {
+    groups.set(base);
+    draws.clear();
+    for (const { groups: change, kind, key } of drawn) {
+      const x = random.rectangular();
+      draws.set(`${kind} ${key}`, x);
+      for (let g = 0; g < groups.length; g++) groups[g] = (groups[g] as number) + x * (change[g] as number);
+    }
+    const drawOf: DrawOf = (kind, key) => draws.get(`${kind} ${key}`) ?? 0;
+    nearItems?.addTo(groups, factors, drawOf);
+    const state: MeasuredState = {
+      groups,
+      bounds: bounds.drawn(judging.background.bounds, sensor.positionToleranceM, drawOf, random),
+      earth: earth && drawnEarth(earth, random),
+    };
+    values[i] = judging.measure.measure(state).value + backgroundSigma * random.normal();
+  }
+  values.sort();
+  const reach = values[Math.ceil(QUANTILE * DRAWS) - 1] as number;
+  return plan.components.length + plan.bounds.length === 0 ? 0 : Math.max(0, reach - measured.value);
+}
+
+/** Groups of everything that moves linearly, background included. */
+function baseGroups(judging: LimitJudging, factors: CaseFactors, near: ReadonlySet<number>): Float64Array {
+  const { plan } = judging.at;
+  const included = judging.included.map(
+    (takesPart, c) => takesPart && !near.has(plan.components[c]?.item ?? -1),
+  );
+  const groups = new Float64Array(judging.stride * plan.frequencies.groups.length);
+  sumGroups(plan, judging.phasors, judging.stride, factors.items, included, groups);
+  judging.background.staticT.forEach((component, i) => (groups[i] = (groups[i] as number) + component));
+  return groups;
+}
+
+const sizeOf = ({ groups }: InputVector): number => product(groups, 0, groups, 0, groups.length);
+const needed = (input: InputVector): boolean => sizeOf(input) > 0;
+
+/** Leaves out inputs too small to tell, unless items drawn anew need every one of them. */
+function droppingSmall(inputs: InputVector[], keepAll: boolean): InputVector[] {
+  if (keepAll) return inputs;
+  const ascending = inputs.map((input) => ({ input, size: sizeOf(input) })).sort((a, b) => a.size - b.size);
+  const total = ascending.reduce((sum, { size }) => sum + size, 0);
+  let dropped = 0;
+  const small = new Set<InputVector>();
+  for (const { input, size } of ascending) {
+    dropped += size;
+    if (dropped > LUMPED_SHARE * total) break;
+    small.add(input);
+  }
+  return inputs.filter((input) => !small.has(input));
+}
+
+function drawnEarth(earth: PlanEarth, random: RandomStream): PlanEarth {
+  if (earth.horizontalSigmaT === 0 && earth.declinationSigmaRad === 0) return earth;
+  const { northward: n, eastward: e } = earth;
+  const turn = earth.declinationSigmaRad * random.normal();
+  const [cos, sin] = [Math.cos(turn), Math.sin(turn)];
+  return {
+    ...earth,
+    northward: [n[0] * cos + e[0] * sin, n[1] * cos + e[1] * sin, 0],
+    eastward: [e[0] * cos - n[0] * sin, e[1] * cos - n[1] * sin, 0],
+    elements: {
+      ...earth.elements,
+      horizontalT: earth.elements.horizontalT + earth.horizontalSigmaT * random.normal(),
+    },
+  };
+}
+
+/** Bounds of dipoles of unknown direction, with their readings and the sensor's place drawn. */
+class BoundDraws {
+  constructor(
+    private readonly judging: LimitJudging,
+    private readonly factors: CaseFactors,
+  ) {}
+
+  drawn(background: Float64Array, toleranceM: number, draw: DrawOf, random: RandomStream): Float64Array {
+    const out = Float64Array.from(background);
+    const { judging, factors } = this;
+    const { bounds, plan } = judging.at;
+    const own = toleranceM * RECTANGULAR;
+    const power = judging.measure.width === 3 ? 3 : 4;
+    plan.bounds.forEach(({ tolerancePercent }, index) => {
+      const r = bounds.distanceM[index] as number;
+      const [ox, oy, oz] = bounds.outward[index] ?? [0, 0, 0];
+      const moved = Math.hypot(
+        ox * r + own * draw("x", 0),
+        oy * r + own * draw("y", 0),
+        oz * r + own * draw("z", 0),
+      );
+      const reading = 1 + tolerancePercent * 0.01 * RECTANGULAR * random.rectangular();
+      const size = (judging.itemBounds[index] as number) * (factors.bounds[index] as number);
+      const classIndex = judging.boundClasses[index] as number;
+      out[classIndex] = (out[classIndex] as number) + size * reading * (r / Math.max(moved, 1e-6)) ** power;
+    });
+    return out;
+  }
+}
