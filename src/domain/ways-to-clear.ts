@@ -28,11 +28,14 @@ function waysToLessField(judged: Judged): string[] {
   if (finding.value + finding.expandedUncertainty <= finding.limit) return [];
   const share = shareOfAllSources(judged);
   const sentences: string[] = [];
-  const inCase = document.loadCases.length > 1 ? " in the load case that governs" : "";
+  const inCase =
+    finding.loadCaseId !== null && document.loadCases.length > 1 ? " in the load case that governs" : "";
   if (share !== null && share >= 0.01)
     sentences.push(
       `All sources drawn, taken down together to ${wholePercent(Math.floor(share * 100))} of what is stated, would bring it within its limit${inCase}.`,
     );
+  if (finding.expandedUncertainty >= finding.limit)
+    sentences.push("Its uncertainty alone fills the budget: know currents and positions better first.");
   const largest = largestSpender(finding);
   if (largest === null || finding.value <= finding.limit) return sentences;
   const { name } = sourceFinder(numberedSources(document))(largest.id);
