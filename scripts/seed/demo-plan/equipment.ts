@@ -1,6 +1,6 @@
 import type { EquipmentInput } from "../../../src/domain/plan-document/equipment";
 
-/** What is known of these by one reading each, taken around them with a three-axis meter. */
+/** Machines known by one reading each, taken around them with a three-axis meter, and a reel whose slack stays on it. */
 export const equipment: EquipmentInput[] = [
   {
     id: "transformer-t2",
@@ -23,5 +23,17 @@ export const equipment: EquipmentInput[] = [
     frequencyHz: 50,
     direction: null,
     tolerancePercent: 10,
+  },
+  {
+    id: "spare-reel",
+    name: "Spare reel, 24 V to the lane",
+    kind: "coil",
+    turns: 18,
+    radiusM: 0.5,
+    lengthM: 0.4,
+    centre: [24.2, 2.2, 0.5],
+    axis: [0, 0, 1],
+    supply: { kind: "dc", currentA: 16 },
+    tolerancePercent: 20,
   },
 ];
