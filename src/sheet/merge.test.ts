@@ -121,6 +121,12 @@ describe("a three-way merge", () => {
   it("says in words what happened to an object", () => {
     expect(changeWords(undefined, {})).toBe("added");
     expect(changeWords({}, undefined)).toBe("deleted");
-    expect(changeWords(route("r1", 1), { ...route("r1", 2), name: "Riser" })).toBe("changed: name, vertices");
+    expect(changeWords(route("r1", 1), { ...route("r1", 2), name: "Riser" })).toBe(
+      "changed: name “Riser”, vertices",
+    );
+    const pumped = { supply: { kind: "dc", currentA: 9 }, position: [1, 2, 3], loadGroup: null };
+    expect(changeWords({ supply: null, position: [0, 0, 0], loadGroup: "a" }, pumped)).toBe(
+      "changed: supply dc, 9 A, position (1, 2, 3), loadGroup not known",
+    );
   });
 });

@@ -154,7 +154,20 @@ export function changeWords(base: unknown, side: unknown): string {
   const [before, after] = [base as Record<string, unknown>, side as Record<string, unknown>];
   const keys = [...new Set([...Object.keys(before), ...Object.keys(after)])];
   const changed = keys.filter((key) => !sameJson(before[key], after[key]));
-  return `changed: ${changed.map((key) => words[key] ?? key).join(", ")}`;
+  return `changed: ${changed.map((key) => `${words[key] ?? key}${valueWords(after[key])}`).join(", ")}`;
+}
+
+/** A value that is short enough to compare at a glance, with a space before it; "" for anything longer. */
+function valueWords(value: unknown): string {
+  if (typeof value === "string") return ` “${value}”`;
+  if (typeof value === "number") return ` ${value}`;
+  if (Array.isArray(value) && value.length <= 3 && value.every((part) => typeof part === "number")) {
+    return ` (${value.join(", ")})`;
+  }
+  const short = value as { kind?: unknown; currentA?: unknown } | null | undefined;
+  if (value === null) return " not known";
+  if (typeof short?.kind !== "string") return "";
+  return typeof short.currentA === "number" ? ` ${short.kind}, ${short.currentA} A` : ` ${short.kind}`;
 }
 
 const words: Record<string, string> = {

@@ -18,7 +18,7 @@ export function InstructionLine() {
   return (
     <div
       ref={line}
-      className="flex min-h-17 flex-wrap items-end gap-x-4 gap-y-2 border-y border-rule bg-raised px-3 py-1.5"
+      className="flex min-h-17 flex-wrap items-center gap-x-4 gap-y-2 border-y border-rule bg-raised px-3 py-1.5"
     >
       <p
         id="instruction-line"

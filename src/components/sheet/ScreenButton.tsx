@@ -27,11 +27,11 @@ export function ScreenButton({ planId, autosave }: Props) {
   });
   const busy = screening.isPending || screening.isSuccess;
   return (
-    <div className="grid justify-items-end">
+    <div className="flex flex-wrap items-center justify-end gap-x-3">
+      {sensors.length === 0 && <p className="text-xs text-muted">Place a sensor first.</p>}
       <Button kind="primary" small disabled={busy || sensors.length === 0} onClick={() => screening.mutate()}>
         {busy ? "Screening…" : "Screen this plan"}
       </Button>
-      {sensors.length === 0 && <p className="text-xs text-muted">Place a sensor first.</p>}
       <p role="alert" className="max-w-80 text-xs text-over">
         {screening.error?.message}
       </p>

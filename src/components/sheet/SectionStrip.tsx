@@ -182,14 +182,14 @@ function Scale({ lowM, highM, px, py, width, centreX, scale }: ScaleProps) {
       {heights.map((z) => (
         <g key={z}>
           <line
-            x1="34"
+            x1="44"
             x2={width}
             y1={py(z)}
             y2={py(z)}
             className={z === 0 ? "stroke-ink" : "stroke-rule"}
             strokeWidth={z === 0 ? 1.5 : 1}
           />
-          <text x="30" y={py(z) + 4} textAnchor="end" className="fill-muted text-xs">
+          <text x="40" y={py(z) + 4} textAnchor="end" className="fill-muted text-xs">
             {z} m
           </text>
         </g>

@@ -10,6 +10,7 @@ import { PlanShapes } from "./PlanShapes";
 import { PointerReadout } from "./PointerReadout";
 import { NorthMark } from "./NorthMark";
 import { ZoomButtons } from "./ZoomButtons";
+import { SheetOutline } from "./SheetOutline";
 import { useGestures } from "./use-gestures";
 import { useImage } from "./use-image";
 import { fitView, useKeys } from "./use-keys";
@@ -71,6 +72,7 @@ export function Drawing({ planId }: { planId: string }) {
             <GridShape view={view} size={size} palette={palette} overDrawing={sheet !== undefined} />
           </Layer>
           <Layer listening={false} x={view.x} y={view.y} scaleX={view.scale} scaleY={-view.scale}>
+            {sheet !== undefined && <SheetOutline sheet={sheet} colour={palette["rule-strong"]} />}
             <FieldMapShapes scale={view.scale} palette={palette} />
             <PlanShapes scale={view.scale} palette={palette} />
             <Marks marks={marks} scale={view.scale} palette={palette} />

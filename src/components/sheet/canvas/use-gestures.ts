@@ -124,6 +124,8 @@ export function useGestures(element: RefObject<HTMLElement | null>, store: Sheet
     };
 
     const leave = () => store.update({ pointerM: null });
+    // The press may have moved the focus to an input of the step; the browser would take it back here.
+    const keepFocus = (event: MouseEvent) => event.preventDefault();
     const noMenu = (event: MouseEvent) => event.button === 1 && event.preventDefault();
     const keyDown = (event: KeyboardEvent) => {
       if (event.key === " " && document.activeElement === target) spaceHeld.current = true;
@@ -139,6 +141,7 @@ export function useGestures(element: RefObject<HTMLElement | null>, store: Sheet
     target.addEventListener("pointerup", up, { signal });
     target.addEventListener("pointercancel", cancel, { signal });
     target.addEventListener("pointerleave", leave, { signal });
+    target.addEventListener("mousedown", keepFocus, { signal });
     target.addEventListener("auxclick", noMenu, { signal });
     target.addEventListener("wheel", wheel, { passive: false, signal });
     addEventListener("keydown", keyDown, { signal });

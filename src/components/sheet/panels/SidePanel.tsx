@@ -50,7 +50,10 @@ export function SidePanel({ siteEarth, onOpenSchedule }: Props) {
     document.getElementById(`${id}-${next}`)?.focus();
   };
   return (
-    <section aria-label="Properties" className="flex min-h-0 flex-col lg:max-h-[58%]">
+    <section
+      aria-label="Properties"
+      className="order-first flex min-h-0 flex-col lg:order-none lg:max-h-[58%]"
+    >
       <div
         role="tablist"
         aria-label="Properties"
