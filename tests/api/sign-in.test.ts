@@ -178,11 +178,18 @@ describe("coming back from the provider", () => {
     expect(problemOf(response)).toBe("provider-refused");
   });
 
+  it("is refused with an answer that names another provider", async () => {
+    const visitor = app.visitor();
+    const address = await answerOfProvider(visitor, "farnwick.planner");
+    expect(address.searchParams.get("iss")).toBe(env().oidc.issuer);
+    address.searchParams.set("iss", "https://elsewhere.example");
+    expect(problemOf(await visitor.request(address))).toBe("provider-refused");
+  });
+
   it.each([
     ["declined", { error: "access_denied" }],
     ["provider-refused", { error: "server_error" }],
     ["provider-refused", { code: "never-issued" }],
-    ["provider-refused", { code: "x", iss: "https://elsewhere.example" }],
     ["provider-refused", {}],
   ])("tells %s for %o", async (problem, answer) => {
     const visitor = app.visitor();
