@@ -12,7 +12,7 @@ import { useAutosave } from "./save/use-autosave";
 import { ScheduleDialog } from "./schedule/ScheduleDialog";
 import { ScreenButton } from "./ScreenButton";
 import { SectionStrip } from "./SectionStrip";
-import type { SheetProps } from "./SheetIsland";
+import type { SheetProps } from "./props";
 import { StepBar, UndoButtons } from "./StepBar";
 import {
   SheetContext,

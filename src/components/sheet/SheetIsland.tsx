@@ -4,25 +4,11 @@ import { NoConnection } from "~/client/api";
 import { loadDraft } from "~/client/draft-store";
 import { getPlan, queryKeys } from "~/client/plan-calls";
 import { Button } from "~/components/ui/Button";
-import type { EarthField } from "~/domain/plan-document/earth-field";
 import type { PlanDocument } from "~/domain/plan-document/plan-document";
 import type { History } from "~/sheet/history";
 import { Sheet } from "./Sheet";
+import type { SheetProps } from "./props";
 import { resume, resumeOffline, type Start } from "./save/resume";
-
-export interface SheetProps {
-  planId: string;
-  planName: string;
-  userId: string;
-  /** Whether this person may change the plan. */
-  mayEdit: boolean;
-  /** Whether this person may have it screened. */
-  mayScreen: boolean;
-  /** The Earth's field at the site today; null where the site has no place. */
-  siteEarth: EarthField | null;
-  /** What the site calls its phases, such as "L1/L2/L3". */
-  phaseLabels: string;
-}
 
 async function start(planId: string, userId: string, signal: AbortSignal): Promise<Start> {
   // A browser that keeps no drafts has none to restore.

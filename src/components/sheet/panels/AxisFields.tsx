@@ -1,7 +1,7 @@
 import type { Sensor } from "~/domain/plan-document/sensor";
 import { Choice } from "../inputs/Choice";
 import { NumberField } from "../inputs/NumberField";
-import type { ChangeSensor } from "./SensorPanel";
+import type { ChangeSensor } from "./changes";
 
 const presets = {
   none: null,

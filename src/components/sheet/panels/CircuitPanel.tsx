@@ -16,21 +16,9 @@ import { CommitField } from "../inputs/CommitField";
 import { NumberField } from "../inputs/NumberField";
 import { beginStep, focusDrawing } from "../StepBar";
 import { useDocument, useEditable, useSheetStore } from "../store";
+import type { ChangeCircuit } from "./changes";
 import { SupplyFields } from "./SupplyFields";
 import { VertexList } from "./VertexList";
-
-export const basisLabels: Record<Circuit["currentBasis"], string> = {
-  measured: "measured",
-  "load-list": "load list",
-  "rating-plate": "rating plate",
-  breaker: "breaker rating (upper bound)",
-  assumed: "assumed",
-};
-
-export const basisOptions = (Object.keys(basisLabels) as Circuit["currentBasis"][]).map((value) => ({
-  value,
-  label: basisLabels[value],
-}));
 
 function arrangementOptions(circuit: Circuit): { value: Arrangement["kind"]; label: string }[] {
   const { arrangement, supply } = circuit;
@@ -214,8 +202,6 @@ export function CircuitPanel({ circuit }: { circuit: Circuit }) {
 export function Notice({ children }: { children: ReactNode }) {
   return <div className="message message-undecided grid justify-items-start">{children}</div>;
 }
-
-export type ChangeCircuit = (label: string, how: (circuit: Circuit) => Circuit) => void;
 
 function Tolerances({
   circuit,

@@ -3,7 +3,7 @@ import type { Limit, Sensor } from "~/domain/plan-document/sensor";
 import { limitKinds, limitTitles, newLimit } from "~/sheet/edits/sensor-kinds";
 import { Choice } from "../inputs/Choice";
 import { NumberField } from "../inputs/NumberField";
-import type { ChangeSensor } from "./SensorPanel";
+import type { ChangeSensor } from "./changes";
 
 interface Props {
   sensor: Sensor;

@@ -110,5 +110,3 @@ export function SensorPanel({ sensor }: { sensor: Sensor }) {
     </div>
   );
 }
-
-export type ChangeSensor = (label: string, how: (sensor: Sensor) => Sensor) => void;

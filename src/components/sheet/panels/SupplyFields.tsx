@@ -4,7 +4,8 @@ import type { Supply } from "~/domain/plan-document/supply";
 import { fitsSupply, supplyOf, withSupply } from "~/sheet/edits/circuits";
 import { Choice } from "../inputs/Choice";
 import { NumberField } from "../inputs/NumberField";
-import { basisOptions, type ChangeCircuit } from "./CircuitPanel";
+import { basisOptions } from "./basis";
+import type { ChangeCircuit } from "./changes";
 
 export const supplyOptions: readonly { value: Supply["kind"]; label: string }[] = [
   { value: "dc", label: "DC" },

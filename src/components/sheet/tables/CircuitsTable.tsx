@@ -11,7 +11,7 @@ import {
 } from "~/sheet/edits/circuits";
 import { removeCircuits } from "~/sheet/edits/remove";
 import { numberText, readNumber } from "~/sheet/read-number";
-import { basisOptions } from "../panels/CircuitPanel";
+import { basisOptions } from "../panels/basis";
 import { balancedCurrentA, supplyOptions, withCurrent } from "../panels/SupplyFields";
 import { useDocument, useEditable, useSheetStore } from "../store";
 import { CellInput } from "./CellInput";
