@@ -63,7 +63,7 @@ export function PlanFigure({ document, result, imageUrl, label, width }: Props) 
     <svg
       role="img"
       aria-label={label}
-      className={`block h-auto w-full text-[13px] ${narrow ? "min-w-[38rem]" : "min-w-[62rem]"}`}
+      className={`block h-auto w-full text-[13px] print:min-w-0 ${narrow ? "min-w-[38rem]" : "min-w-[62rem]"}`}
       viewBox={`0 0 ${frame.width.toFixed(0)} ${frame.height.toFixed(0)}`}
     >
       {imageUrl !== undefined && <SheetImage document={document} frame={frame} url={imageUrl} />}
@@ -132,7 +132,7 @@ function SheetImage({ document, frame, url }: { document: PlanDocument; frame: F
       width={sheet.widthPx}
       height={sheet.heightPx}
       transform={place}
-      className="opacity-60 dark:invert"
+      className="sheet-image"
     />
   );
 }
