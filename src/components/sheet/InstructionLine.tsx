@@ -27,9 +27,7 @@ export function InstructionLine() {
         className="min-w-64 flex-1 self-center text-sm"
         data-testid="instruction"
       >
-        {editable
-          ? instruction
-          : "You see this plan read only: press on a sensor or a route to see what it is."}
+        {editable ? instruction : "Press on a sensor or a route to see what it is."}
       </p>
       {inputs.map((input) => (
         <LineInput key={`${name}-${input.id}`} input={input} />

@@ -32,7 +32,7 @@ export function ScreenButton({ planId, autosave }: Props) {
       <Button kind="primary" small disabled={busy || sensors.length === 0} onClick={() => screening.mutate()}>
         {busy ? "Screening…" : "Screen this plan"}
       </Button>
-      <p role="alert" className="max-w-80 text-xs text-over">
+      <p role="alert" className="max-w-80 text-xs text-over empty:hidden">
         {screening.error?.message}
       </p>
     </div>

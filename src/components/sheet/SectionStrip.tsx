@@ -3,6 +3,7 @@ import { circuitsOn, sameOwner, type PathOwner } from "~/sheet/edits/paths";
 import { updateSensor } from "~/sheet/edits/sensors";
 import type { PlanDocument } from "~/domain/plan-document/plan-document";
 import { crossingsAt, heightRange, liftRun, profilesOf } from "~/sheet/section";
+import { placeLabels } from "~/sheet/label-places";
 import { itemOfPath, selectedOwners } from "~/sheet/selection";
 import { tidyM } from "~/sheet/geometry";
 import { gridStepM, toPlan } from "~/sheet/view";
@@ -57,6 +58,18 @@ export function SectionStrip() {
   const py = (z: number): number => heightPx - marginPx - (z - lowM) * scale;
   const crossings = crossingsAt(document, slice.y);
   const sensors = document.sensors.filter(({ position }) => Math.abs(position[1] - slice.y) <= sliceDepthM);
+  const isChosen = (id: string): boolean =>
+    selection.some((item) => item.kind === "sensor" && item.id === id);
+  const labels = placeLabels(
+    sensors
+      .map(({ id, name, position: [x, , z] }) => ({
+        id,
+        at: [px(x), py(z)] as const,
+        text: `${name}, ${z.toFixed(2)} m`,
+      }))
+      .sort((a, b) => Number(isChosen(b.id)) - Number(isChosen(a.id))),
+    { clearPx: 13, linePx: 16, letterPx: 6.5 },
+  );
   const chosenOwners = selectedOwners(document, selection);
   const isLit = (owner: PathOwner): boolean =>
     chosenOwners.some((chosen) => sameOwner(chosen, owner)) ||
@@ -128,7 +141,7 @@ export function SectionStrip() {
           </HeightHandle>
         ))}
         {sensors.map(({ id, name, position }) => {
-          const chosen = selection.some((item) => item.kind === "sensor" && item.id === id);
+          const chosen = isChosen(id);
           return (
             <HeightHandle
               key={id}
@@ -147,9 +160,15 @@ export function SectionStrip() {
                 strokeWidth={chosen ? 3 : 1.75}
               />
               <line y1="-7" y2="7" className="stroke-ink" strokeWidth="1.75" />
-              <text x="13" y="4" className="fill-ink text-xs">
-                {`${name}, ${(position[2] + (liftM?.key === id ? liftM.byM : 0)).toFixed(2)} m`}
-              </text>
+              {labels.has(id) && (
+                <text
+                  x={labels.get(id)?.[0]}
+                  y={(labels.get(id)?.[1] ?? 0) + 12}
+                  className="fill-ink text-xs"
+                >
+                  {`${name}, ${(position[2] + (liftM?.key === id ? liftM.byM : 0)).toFixed(2)} m`}
+                </text>
+              )}
             </HeightHandle>
           );
         })}

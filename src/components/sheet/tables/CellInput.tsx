@@ -25,7 +25,7 @@ export function CellInput({ label, value, onCommit, numeric = false, disabled = 
   return (
     <>
       <input
-        className={`input input-small ${numeric ? "min-w-16 text-right" : "min-w-28"}`}
+        className={`input input-small ${numeric ? "min-w-16 text-right" : "min-w-48"}`}
         aria-label={label}
         aria-invalid={problem !== null}
         aria-describedby={`${id}-problem`}

@@ -58,6 +58,17 @@ export function RoutesTable() {
           <Vertices owner={{ list: "routes", id: route.id }} name={route.name} open />
         </div>
       ))}
+      {circuits
+        .filter(({ path }) => path !== null)
+        .map(({ id, name }) => (
+          <div key={id} className="border border-rule p-3" role="group" aria-label={`Path of ${name}`}>
+            <p className="mb-2 text-sm">
+              <span className="font-semibold">{name}</span>{" "}
+              <span className="text-muted">follows a path of its own</span>
+            </p>
+            <Vertices owner={{ list: "circuits", id }} name={name} open />
+          </div>
+        ))}
       {editable && (
         <Button
           small
