@@ -22,6 +22,13 @@ async function settled<T>(promise: Promise<T>): Promise<Outcome<T>> {
 interface Listeners {
   onResult: (document: PlanDocument, outcome: Outcome<ScreeningResult>) => void;
   onMap: (request: FieldMapRequest, outcome: Outcome<FieldMap>) => void;
+  /** As `onMap`, for the map that stands upright in the section. */
+  onSection: (request: FieldMapRequest, outcome: Outcome<FieldMap>) => void;
+}
+
+interface MapTask {
+  document: PlanDocument;
+  map: FieldMapRequest;
 }
 
 /**
@@ -32,7 +39,8 @@ export class LiveScreening {
   private readonly ledger: ScreeningClient = createScreeningClient();
   private readonly mapper: ScreeningClient = createScreeningClient();
   private readonly documents: Latest<PlanDocument>;
-  private readonly maps: Latest<{ document: PlanDocument; map: FieldMapRequest }>;
+  private readonly maps: Latest<MapTask>;
+  private readonly sections: Latest<MapTask>;
   private disposed = false;
 
   constructor(listeners: Listeners) {
@@ -40,10 +48,13 @@ export class LiveScreening {
       const outcome = await settled(this.ledger.screen(document));
       if (!this.disposed) listeners.onResult(document, outcome);
     });
-    this.maps = new Latest(async (request) => {
-      const outcome = await settled(this.mapper.map(request.document, request.map));
-      if (!this.disposed) listeners.onMap(request.map, outcome);
-    });
+    const mapping = (tell: Listeners["onMap"]) =>
+      new Latest<MapTask>(async ({ document, map }) => {
+        const outcome = await settled(this.mapper.map(document, map));
+        if (!this.disposed) tell(map, outcome);
+      });
+    this.maps = mapping(listeners.onMap);
+    this.sections = mapping(listeners.onSection);
   }
 
   screen(document: PlanDocument): void {
@@ -52,6 +63,10 @@ export class LiveScreening {
 
   map(document: PlanDocument, map: FieldMapRequest): void {
     this.maps.ask({ document, map });
+  }
+
+  section(document: PlanDocument, map: FieldMapRequest): void {
+    this.sections.ask({ document, map });
   }
 
   dispose(): void {

@@ -1,6 +1,8 @@
 import type { PlanDocument } from "~/domain/plan-document/plan-document";
 import { ownedPaths, pathOf, withPath, type PathOwner } from "./edits/paths";
-import type { Point2, Point3 } from "./geometry";
+import { tidyM, type Point2, type Point3 } from "./geometry";
+import type { Selection } from "./selection";
+import { toPlan, type SizePx, type View } from "./view";
 
 /** Where a leg passes through the slice: `at` is x and z in metres. */
 export interface Crossing {
@@ -58,4 +60,57 @@ export function liftRun(document: PlanDocument, owner: PathOwner, leg: number, b
     owner,
     path.map(([x, y, z], index) => [x, y, index >= first && index <= last ? z + byM : z]),
   );
+}
+
+/** The strip's own pixels. */
+export const strip = { heightPx: 168, marginPx: 22 } as const;
+
+export interface SectionFrame {
+  /** The slice stands at this y. */
+  sliceY: number;
+  /** What lies in the middle of the strip. */
+  centreX: number;
+  /** Pixels per metre, in both directions. */
+  scale: number;
+  lowM: number;
+  highM: number;
+  /** The sensor that it goes through; null where it goes through the middle of the view. */
+  sensorName: string | null;
+}
+
+/** Through the selected sensor, else through the middle of what the drawing shows; to scale, all heights in view. */
+export function sectionFrame(
+  document: PlanDocument,
+  selection: Selection,
+  view: View,
+  size: SizePx,
+): SectionFrame {
+  const [chosen] = selection.filter((item) => item.kind === "sensor");
+  const sensor = document.sensors.find(({ id }) => id === chosen?.id);
+  const middle = toPlan(view, [size.width / 2, size.height / 2]);
+  const { lowM, highM } = heightRange(document);
+  return {
+    sliceY: sensor?.position[1] ?? tidyM(middle[1]),
+    centreX: sensor?.position[0] ?? middle[0],
+    scale: (strip.heightPx - 2 * strip.marginPx) / (highM - lowM),
+    lowM,
+    highM,
+    sensorName: sensor?.name ?? null,
+  };
+}
+
+/** A grid of x and z over the whole strip, `rows` high. */
+export function sectionGrid(
+  { centreX, scale, lowM }: SectionFrame,
+  widthPx: number,
+  rows: number,
+): { x0M: number; z0M: number; stepM: number; columns: number; rows: number } {
+  const stepM = strip.heightPx / scale / (rows - 1);
+  return {
+    x0M: centreX - widthPx / 2 / scale,
+    z0M: lowM - strip.marginPx / scale,
+    stepM,
+    columns: Math.max(2, Math.ceil(widthPx / scale / stepM) + 1),
+    rows,
+  };
 }

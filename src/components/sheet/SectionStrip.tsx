@@ -1,45 +1,19 @@
-import { useRef, useState } from "react";
+import { useState } from "react";
 import { circuitsOn, sameOwner, type PathOwner } from "~/sheet/edits/paths";
 import { updateSensor } from "~/sheet/edits/sensors";
-import type { PlanDocument } from "~/domain/plan-document/plan-document";
-import { crossingsAt, heightRange, liftRun, profilesOf } from "~/sheet/section";
+import { crossingsAt, liftRun, profilesOf, sectionFrame, strip } from "~/sheet/section";
 import { placeLabels } from "~/sheet/label-places";
 import { itemOfPath, selectedOwners } from "~/sheet/selection";
 import { tidyM } from "~/sheet/geometry";
-import { gridStepM, toPlan } from "~/sheet/view";
+import { gridStepM } from "~/sheet/view";
+import { SectionLines } from "./map/SectionLines";
 import { HeightHandle } from "./HeightHandle";
 import { useEditable, useSelection, useSheet, useSheetStore, useShownDocument } from "./store";
 
-const heightPx = 168;
-const marginPx = 22;
 /** Height labels stand at least this far apart. */
 const labelApartPx = 17;
 /** Sensors nearer than this to the slice stand in it; others are left out. */
 const sliceDepthM = 0.75;
-
-interface Slice {
-  y: number;
-  centreX: number;
-  words: string;
-}
-
-/** Through the selected sensor; else through the middle of what the drawing shows. */
-function useSlice(document: PlanDocument): Slice {
-  const selection = useSelection();
-  const view = useSheet((state) => state.view);
-  const size = useSheet((state) => state.size);
-  const [chosen] = selection.filter((item) => item.kind === "sensor");
-  const sensor = document.sensors.find(({ id }) => id === chosen?.id);
-  if (sensor !== undefined) {
-    return { y: sensor.position[1], centreX: sensor.position[0], words: `through ${sensor.name}` };
-  }
-  const [x, y] = toPlan(view, [size.width / 2, size.height / 2]);
-  return {
-    y: tidyM(y),
-    centreX: x,
-    words: "through the middle of the view; select a sensor to slice through it",
-  };
-}
 
 /** A vertical slice along x, to scale in both directions, with heights to drag or to change by arrow keys. */
 export function SectionStrip() {
@@ -47,17 +21,17 @@ export function SectionStrip() {
   const document = useShownDocument();
   const selection = useSelection();
   const editable = useEditable();
-  const width = useSheet(({ size }) => size.width);
+  const view = useSheet((state) => state.view);
+  const size = useSheet((state) => state.size);
+  const { width } = size;
   const litId = useSheet((state) => state.litId);
-  const slice = useSlice(document);
-  const svg = useRef<SVGSVGElement>(null);
+  const frame = sectionFrame(document, selection, view, size);
+  const { sliceY, centreX, scale, lowM, highM } = frame;
   const [liftM, setLiftM] = useState<{ key: string; byM: number } | null>(null);
-  const { lowM, highM } = heightRange(document);
-  const scale = (heightPx - 2 * marginPx) / (highM - lowM);
-  const px = (x: number): number => width / 2 + (x - slice.centreX) * scale;
-  const py = (z: number): number => heightPx - marginPx - (z - lowM) * scale;
-  const crossings = crossingsAt(document, slice.y);
-  const sensors = document.sensors.filter(({ position }) => Math.abs(position[1] - slice.y) <= sliceDepthM);
+  const px = (x: number): number => width / 2 + (x - centreX) * scale;
+  const py = (z: number): number => strip.heightPx - strip.marginPx - (z - lowM) * scale;
+  const crossings = crossingsAt(document, sliceY);
+  const sensors = document.sensors.filter(({ position }) => Math.abs(position[1] - sliceY) <= sliceDepthM);
   const isChosen = (id: string): boolean =>
     selection.some((item) => item.kind === "sensor" && item.id === id);
   const labels = placeLabels(
@@ -96,25 +70,20 @@ export function SectionStrip() {
     <section aria-label="Section strip" className="border-b border-rule bg-raised">
       <h2 className="sr-only">Section strip</h2>
       <p className="px-3 pt-1 text-xs text-muted">
-        Section at y = {slice.y.toFixed(2)} m, {slice.words}
+        Section at y = {sliceY.toFixed(2)} m,{" "}
+        {frame.sensorName === null
+          ? "through the middle of the view; select a sensor to slice through it"
+          : `through ${frame.sensorName}`}
       </p>
       <svg
-        ref={svg}
         width={width}
-        height={heightPx}
+        height={strip.heightPx}
         className="block"
         role="group"
         aria-label="Section drawing"
       >
-        <Scale
-          lowM={lowM}
-          highM={highM}
-          px={px}
-          py={py}
-          width={width}
-          centreX={slice.centreX}
-          scale={scale}
-        />
+        <Scale lowM={lowM} highM={highM} px={px} py={py} width={width} centreX={centreX} scale={scale} />
+        <SectionLines px={px} py={py} scale={scale} />
         {profilesOf(document).map(({ owner, points }) => (
           <polyline
             key={`${owner.list}/${owner.id}`}

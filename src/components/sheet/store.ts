@@ -26,11 +26,18 @@ export interface MapSettings {
   loadCaseId: string | null;
 }
 
+export interface Mapped {
+  grid: FieldGrid;
+  quantity: MapQuantity;
+}
+
 export interface FieldMapState {
   /** Null while the map is off. */
   settings: MapSettings | null;
   /** What was last mapped, with the quantity that it shows. */
-  mapped: { grid: FieldGrid; quantity: MapQuantity } | null;
+  mapped: Mapped | null;
+  /** The same in the section: x across, z up. */
+  section: Mapped | null;
   problem: string | null;
 }
 
@@ -76,7 +83,7 @@ export class SheetStore {
       litId: null,
       pointerM: null,
       live: { kind: "waiting" },
-      map: { settings: null, mapped: null, problem: null },
+      map: { settings: null, mapped: null, section: null, problem: null },
     };
   }
 

@@ -29,7 +29,12 @@ export function MapPanel() {
   const selectedHeightM = document.sensors.find(({ id }) => id === selected?.id)?.position[2];
   const set = (next: MapSettings | null) =>
     store.update({
-      map: { settings: next, mapped: next === null ? null : store.get().map.mapped, problem: null },
+      map: {
+        ...store.get().map,
+        settings: next,
+        problem: null,
+        ...(next === null && { mapped: null, section: null }),
+      },
     });
   const noEarth = document.earthField === null;
   return (

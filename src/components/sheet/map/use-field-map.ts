@@ -3,7 +3,7 @@ import { limitValue, type Limit } from "~/domain/plan-document/sensor";
 import { fieldLines, roundLevels, valueAt, type FieldGrid, type FieldLine } from "~/sheet/field-lines";
 import type { Point2 } from "~/sheet/geometry";
 import { useMemo } from "react";
-import { useSelection, useSheet, useShownDocument, type MapQuantity } from "../store";
+import { useSelection, useSheet, useShownDocument, type Mapped, type MapQuantity } from "../store";
 
 export const unitOf = (quantity: MapQuantity): QuantityUnit => (quantity === "heading" ? "deg" : "T");
 
@@ -46,9 +46,8 @@ export interface MapLines {
   limit: FieldLine | null;
 }
 
-/** The contour lines of the map, with that of the selected sensor's limit apart; null while there is nothing to draw. */
-export function useMapLines(): MapLines | null {
-  const mapped = useSheet(({ map }) => (map.settings === null ? null : map.mapped));
+/** The contour lines of a map, with that of the selected sensor's limit apart; null while there is nothing to draw. */
+function useLines(mapped: Mapped | null): MapLines | null {
   const limit = useMapLimit();
   return useMemo(() => {
     if (mapped === null) return null;
@@ -59,3 +58,8 @@ export function useMapLines(): MapLines | null {
     return { grid, quantity, lines, limit: limitLine ?? null };
   }, [mapped, limit]);
 }
+
+export const useMapLines = (): MapLines | null => useLines(useSheet(({ map }) => map.mapped));
+
+/** The same in the section: x across, z up. */
+export const useSectionLines = (): MapLines | null => useLines(useSheet(({ map }) => map.section));
