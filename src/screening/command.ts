@@ -1,11 +1,9 @@
-import { readFileSync } from "node:fs";
-import { parsePlanDocument, type DocumentFault } from "~/domain/plan-document/parse";
+import { readFileSync, statSync } from "node:fs";
+import type { DocumentFault } from "~/domain/plan-document/parse";
+import { MAX_DOCUMENT_BYTES, readPlanDocument } from "~/domain/plan-document/read";
 import { resultText } from "~/domain/result-text";
 import { RefusedDocumentError } from "./refusal";
 import { screen } from "./screen";
-
-/** Largest plan document read, bytes. */
-const MAX_BYTES = 20 * 1024 * 1024;
 
 const EXIT = { within: 0, failed: 1, refused: 2, flagged: 3 } as const;
 
@@ -21,9 +19,10 @@ function main(args: readonly string[]): number {
     return EXIT.failed;
   }
   try {
-    const parsed = parsePlanDocument(readJson(file));
-    if (!parsed.ok) return refuse(parsed.faults);
-    const result = screen(parsed.document);
+    const read = readPlanDocument(textOf(file));
+    if (!read.ok)
+      return refuse("notJson" in read ? [documentFault(`not JSON: ${read.notJson}`)] : read.faults);
+    const result = screen(read.document);
     process.stdout.write(resultText(result));
     return result.verdict === "within" ? EXIT.within : EXIT.flagged;
   } catch (error) {
@@ -33,19 +32,15 @@ function main(args: readonly string[]): number {
   }
 }
 
-function readJson(file: string): unknown {
-  const bytes = readFileSync(file);
-  if (bytes.length > MAX_BYTES) {
-    throw new RefusedDocumentError([
-      { path: "document", message: `${bytes.length} bytes; a plan document has at most ${MAX_BYTES}` },
-    ]);
+const documentFault = (message: string): DocumentFault => ({ path: "document", message });
+
+function textOf(file: string): string {
+  const { size } = statSync(file);
+  if (size > MAX_DOCUMENT_BYTES) {
+    const message = `${size} bytes; a plan document has at most ${MAX_DOCUMENT_BYTES}. Split the plan by area`;
+    throw new RefusedDocumentError([documentFault(message)]);
   }
-  try {
-    return JSON.parse(bytes.toString("utf8"));
-  } catch (error) {
-    const reason = error instanceof Error ? error.message : String(error);
-    throw new RefusedDocumentError([{ path: "document", message: `not JSON: ${reason}` }]);
-  }
+  return readFileSync(file, "utf8");
 }
 
 function refuse(faults: readonly DocumentFault[]): number {

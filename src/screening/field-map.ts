@@ -130,7 +130,7 @@ function factorsOf(plan: CompiledPlan, loadCaseId: string | null): CaseFactors {
 function pointMeasure(
   plan: CompiledPlan,
   earth: PlanEarth | null,
-  { includes, measure }: LimitMeasure,
+  { includes, value }: LimitMeasure,
   factors: CaseFactors,
 ): (at: Vector) => number {
   const influence = new Float64Array(3 * plan.setCount);
@@ -151,6 +151,6 @@ function pointMeasure(
       if (classIndex >= 0)
         bounds[classIndex] = (bounds[classIndex] as number) + fieldT * (factors.bounds[index] as number);
     });
-    return measure({ groups, bounds, earth }).value;
+    return value({ groups, bounds, earth });
   };
 }

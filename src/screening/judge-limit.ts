@@ -43,16 +43,31 @@ export function judgeLimit(judging: LimitJudging, capped: boolean, uncertaintyOf
   };
 }
 
-/** Load cases; for swing the one pair whose difference is the largest. */
+/**
+ * Load cases, those left out that do to this limit what an earlier one does (the first listed governs on a tie); for swing the one pair
+ * whose difference is the largest.
+ */
 function casesOf(judging: LimitJudging): CaseFactors[] {
   const { plan } = judging.at;
-  if (judging.limit.kind !== "swing") return caseFactors(plan);
+  if (judging.limit.kind !== "swing") return distinctCases(judging, caseFactors(plan));
   const [first, ...others] = swingFactors(plan).map((factors) => ({
     factors,
     value: judging.measureIn(factors).measured.value,
   }));
   if (!first) return [];
   return [others.reduce((best, next) => (next.value > best.value ? next : best), first).factors];
+}
+
+function distinctCases(judging: LimitJudging, cases: CaseFactors[]): CaseFactors[] {
+  const { plan } = judging.at;
+  const items = [...new Set(plan.components.flatMap(({ item }, c) => (judging.included[c] ? [item] : [])))];
+  const seen = new Set<string>();
+  return cases.filter((factors) => {
+    const key = [...items.map((item) => factors.items[item]), ...factors.bounds].join();
+    if (seen.has(key)) return false;
+    seen.add(key);
+    return true;
+  });
 }
 
 function worse(one: Candidate, other: Candidate): Candidate {

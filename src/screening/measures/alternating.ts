@@ -7,7 +7,8 @@ import {
   type GroupMagnitude,
   type MagnitudeOf,
 } from "./group-magnitude";
-import { blankMeasured, type Measure, type Measured, type MeasuredState } from "./measure";
+import { ellipseAt } from "./ellipse";
+import { blankMeasured, product, type Measure, type Measured, type MeasuredState } from "./measure";
 
 export type UnknownPhase = "worst-case" | "typical";
 
@@ -48,6 +49,40 @@ export function alternatingMeasure(
     return measured;
   };
 }
+
+/** The value of `alternatingMeasure` alone. */
+export function alternatingValue(
+  groups: readonly FieldGroup[],
+  axis: Vector | null,
+  unknownPhase: UnknownPhase,
+  measure: "rms" | "peakToPeak",
+): (state: MeasuredState) => number {
+  const size = axis
+    ? axisSize(axis)
+    : (field: Float64Array, at: number) =>
+        measure === "peakToPeak" ? ellipseAt(field, at).major : Math.sqrt(product(field, at, field, at, 6));
+  const worst = unknownPhase === "worst-case";
+  let sums = new Float64Array(0);
+  return (state) => {
+    if (sums.length !== state.bounds.length) sums = new Float64Array(state.bounds.length);
+    sums.fill(0);
+    groups.forEach(({ classIndex }, group) => {
+      if (classIndex === 0) return;
+      const magnitude = size(state.groups, 6 * group);
+      sums[classIndex] = (sums[classIndex] as number) + (worst ? magnitude : magnitude * magnitude);
+    });
+    let total = 0;
+    for (let classIndex = 1; classIndex < sums.length; classIndex++) {
+      const sum = sums[classIndex] as number;
+      const value = (worst ? sum : Math.sqrt(sum)) + (state.bounds[classIndex] as number);
+      total += measure === "rms" ? value * value : value;
+    }
+    return measure === "rms" ? Math.sqrt(total) : 2 * Math.SQRT2 * total;
+  };
+}
+
+const axisSize = (axis: Vector) => (field: Float64Array, at: number) =>
+  Math.hypot(product(field, at, axis, 0, 3), product(field, at + 3, axis, 0, 3));
 
 /** Magnitudes of all classes, DC left at nought. */
 export function classMagnitudes(

@@ -1,5 +1,5 @@
 import type { Vector } from "~/field/vector";
-import { blankMeasured, product, type Measure } from "./measure";
+import { blankMeasured, product, type Measure, type MeasuredState } from "./measure";
 
 /**
  * Magnitude of the DC group: resultant (axis null) or the component along a unit axis, plus the bounds at DC.
@@ -25,5 +25,15 @@ export function dcMagnitude(width: 3 | 9, axis: Vector | null): Measure {
     }
     measured.boundShare[0] = value > 0 ? 1 / value : 0;
     return measured;
+  };
+}
+
+/** The value of `dcMagnitude` alone. */
+export function dcMagnitudeValue(width: 3 | 9, axis: Vector | null): (state: MeasuredState) => number {
+  return ({ groups, bounds }) => {
+    const magnitude = axis
+      ? Math.abs(product(groups, 0, axis, 0, 3))
+      : Math.sqrt(product(groups, 0, groups, 0, width));
+    return magnitude + (bounds[0] ?? 0);
   };
 }

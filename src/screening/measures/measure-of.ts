@@ -1,10 +1,10 @@
 import type { Limit, Sensor } from "~/domain/plan-document/sensor";
 import { unit } from "~/field/vector";
 import type { FieldGroup } from "../frequency-classes";
-import { alternatingMeasure, type UnknownPhase } from "./alternating";
+import { alternatingMeasure, alternatingValue, type UnknownPhase } from "./alternating";
 import { headingMeasure } from "./heading";
-import { dcMagnitude } from "./magnitude";
-import type { Measure } from "./measure";
+import { dcMagnitude, dcMagnitudeValue } from "./magnitude";
+import type { Measure, MeasuredState } from "./measure";
 import { rangeMeasure } from "./range";
 
 /** What a limit compares and which components take part in it. */
@@ -16,9 +16,18 @@ export interface LimitMeasure {
   axis: Sensor["axis"];
   includes(frequencyHz: number): boolean;
   measure: Measure;
+  /** The value alone, for many states in a row. */
+  value: (state: MeasuredState) => number;
 }
 
 const dcOnly = (frequencyHz: number): boolean => frequencyHz === 0;
+
+const base = { unit: "T", width: 3, axis: null } as const;
+
+const valueBy =
+  (measure: Measure) =>
+  (state: MeasuredState): number =>
+    measure(state).value;
 
 export function limitMeasure(
   limit: Limit,
@@ -30,22 +39,43 @@ export function limitMeasure(
   switch (limit.kind) {
     case "static":
     case "swing":
-      return { unit: "T", width: 3, axis, includes: dcOnly, measure: dcMagnitude(3, axis) };
+      return {
+        ...base,
+        axis,
+        includes: dcOnly,
+        measure: dcMagnitude(3, axis),
+        value: dcMagnitudeValue(3, axis),
+      };
     case "alternating": {
       const [lowHz, highHz] = limit.bandHz;
       return {
-        unit: "T",
-        width: 3,
+        ...base,
         axis,
         includes: (frequencyHz) => frequencyHz > 0 && frequencyHz >= lowHz && frequencyHz <= highHz,
         measure: alternatingMeasure(groups, axis, unknownPhase, limit.measure),
+        value: alternatingValue(groups, axis, unknownPhase, limit.measure),
       };
     }
     case "heading":
-      return { unit: "deg", width: 3, axis: null, includes: dcOnly, measure: headingMeasure };
+      return {
+        ...base,
+        unit: "deg",
+        includes: dcOnly,
+        measure: headingMeasure,
+        value: valueBy(headingMeasure),
+      };
     case "gradient":
-      return { unit: "T/m", width: 9, axis: null, includes: dcOnly, measure: dcMagnitude(9, null) };
-    case "range":
-      return { unit: "T", width: 3, axis: null, includes: () => true, measure: rangeMeasure(groups) };
+      return {
+        ...base,
+        unit: "T/m",
+        width: 9,
+        includes: dcOnly,
+        measure: dcMagnitude(9, null),
+        value: dcMagnitudeValue(9, null),
+      };
+    case "range": {
+      const measure = rangeMeasure(groups);
+      return { ...base, includes: () => true, measure, value: valueBy(measure) };
+    }
   }
 }

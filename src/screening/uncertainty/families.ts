@@ -58,3 +58,35 @@ export function effectsOf(
   });
   return effects;
 }
+
+/** Upper bounds of the length of each key's change: Σ over its components of |factor| · |vector|. */
+export function effectNorms(
+  family: InputFamily,
+  components: readonly Component[],
+  factors: Float64Array,
+  included: readonly boolean[],
+): Float64Array {
+  const norms = new Float64Array(family.keyCount);
+  const lengths = vectorLengths(family);
+  components.forEach(({ item }, index) => {
+    const key = family.keys[index] as number;
+    if (key < 0 || !included[index]) return;
+    norms[key] = (norms[key] as number) + Math.abs(factors[item] as number) * (lengths[index] as number);
+  });
+  return norms;
+}
+
+const knownLengths = new WeakMap<InputFamily, Float64Array>();
+
+function vectorLengths(family: InputFamily): Float64Array {
+  const known = knownLengths.get(family);
+  if (known) return known;
+  const { vectors, stride, keys } = family;
+  const lengths = Float64Array.from(keys, (_, index) => {
+    let sum = 0;
+    for (let i = stride * index; i < stride * (index + 1); i++) sum += (vectors[i] as number) ** 2;
+    return Math.sqrt(sum);
+  });
+  knownLengths.set(family, lengths);
+  return lengths;
+}

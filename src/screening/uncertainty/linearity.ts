@@ -4,9 +4,9 @@ import type { CompiledPlan } from "../compile";
 import { conductorDistanceM, reachOf } from "../checks/near-conductors";
 import type { LimitJudging } from "../judging";
 import type { CaseFactors } from "../load-cases";
-import { product, type MeasuredState } from "../measures/measure";
+import { product, type Measured, type MeasuredState } from "../measures/measure";
 import type { SourceItem } from "../source-item";
-import { inputVectors, type InputVector } from "./input-vectors";
+import { inputVectors, traceBound, type InputVector } from "./input-vectors";
 
 /** Position tolerances above this share of the distance to a conductor leave the first order. */
 const NEAR_SHARE = 0.2;
@@ -44,58 +44,92 @@ function isNearer(item: SourceItem, { position }: Sensor, withinM: number): bool
  * Whether what is compared is at least three times the square root of the largest eigenvalue of its covariance, so that its
  * direction, and with it the first order, can be relied on.
  */
-export function isResolved(judging: LimitJudging, factors: CaseFactors, state: MeasuredState): boolean {
+export function isResolved(
+  judging: LimitJudging,
+  factors: CaseFactors,
+  state: MeasuredState,
+  measured: Measured,
+): boolean {
   const compared = comparedPart(judging, state);
-  const inputs = inputVectors(judging, factors).map((input) => comparedVector(judging, input));
-  const squared = product(compared, 0, compared, 0, compared.length);
-  const trace = inputs.reduce((sum, input) => sum + product(input, 0, input, 0, input.length), 0);
-  // The largest eigenvalue is at most the trace, which is had for little.
-  if (squared >= RESOLVED ** 2 * trace) return true;
-  return squared >= RESOLVED ** 2 * largestEigenvalue(inputs, compared.length);
+  const least = product(compared, 0, compared, 0, compared.length) / RESOLVED ** 2;
+  // The largest eigenvalue is at most the trace, and a bound of the trace is had for little.
+  if (least >= traceBound(judging, factors)) return true;
+  const inputs = inputVectors(judging, factors, measured.slope).map((input) =>
+    comparedVector(judging, input),
+  );
+  const trace = inputs.reduce((sum, { values }) => sum + product(values, 0, values, 0, values.length), 0);
+  return least >= trace || least >= largestEigenvalue(inputs, compared.length);
+}
+
+interface SparseVector {
+  /** Where each run of `run` numbers of `values` stands in the whole. */
+  starts: number[];
+  run: number;
+  values: Float64Array;
 }
 
 /** The part of the state that the limit compares: components along an axis, the horizontal part, or all of it. */
-function comparedPart(judging: LimitJudging, state: MeasuredState): Float64Array {
-  const part = comparedVector(judging, { groups: state.groups });
-  if (judging.limit.kind === "range" && state.earth) {
-    state.earth.fieldT.forEach((component, i) => (part[i] = (part[i] as number) + component));
-  }
-  return part;
+function comparedPart(judging: LimitJudging, { groups, earth }: MeasuredState): Float64Array {
+  const { values } = comparedVector(judging, {
+    groups: Array.from({ length: groups.length / judging.stride }, (_, group) => group),
+    values: groups,
+  });
+  if (judging.limit.kind !== "range" || !earth) return values;
+  return values.map((component, i) => component + (earth.fieldT[i] ?? 0));
 }
 
 function comparedVector(
-  { measure, limit }: LimitJudging,
-  { groups }: Pick<InputVector, "groups">,
-): Float64Array {
-  const { axis } = measure;
+  { measure, limit, stride }: LimitJudging,
+  { groups, values }: Pick<InputVector, "groups" | "values">,
+): SparseVector {
   // A range is judged by its steady part: the rest is added by magnitude and has no direction to lose.
-  if (limit.kind === "range") return groups.slice(0, 3);
-  if (limit.kind === "heading") return groups.slice(0, 2);
-  if (!axis) return groups;
-  const projected = new Float64Array(groups.length / 3);
-  for (let i = 0; i < projected.length; i++) projected[i] = product(groups, 3 * i, axis, 0, 3);
-  return projected;
+  if (limit.kind === "range") return dcPart(groups, values, 3);
+  if (limit.kind === "heading") return dcPart(groups, values, 2);
+  const { axis } = measure;
+  if (!axis) return { starts: groups.map((group) => stride * group), run: stride, values };
+  const projected = new Float64Array(values.length / 3);
+  for (let i = 0; i < projected.length; i++) projected[i] = product(values, 3 * i, axis, 0, 3);
+  return { starts: groups.map((group) => 2 * group), run: 2, values: projected };
+}
+
+function dcPart(groups: number[], values: Float64Array, run: number): SparseVector {
+  const dc = groups.indexOf(0);
+  if (dc < 0) return { starts: [0], run, values: new Float64Array(run) };
+  return { starts: [0], run, values: values.slice(6 * dc, 6 * dc + run) };
 }
 
 /** Of Σ d dᵀ over the inputs' vectors, by power iteration. */
-function largestEigenvalue(inputs: readonly Float64Array[], dimension: number): number {
+function largestEigenvalue(inputs: readonly SparseVector[], dimension: number): number {
   let vector = new Float64Array(dimension);
-  const [heaviest] = [...inputs].sort(
-    (a, b) => product(b, 0, b, 0, dimension) - product(a, 0, a, 0, dimension),
-  );
-  if (!heaviest) return 0;
-  vector.set(heaviest);
+  for (const { starts, run, values } of inputs) {
+    // A start that leans on every input: its size where each of them points.
+    values.forEach((value, i) => {
+      const at = (starts[Math.floor(i / run)] as number) + (i % run);
+      vector[at] = (vector[at] as number) + Math.abs(value);
+    });
+  }
   let eigenvalue = 0;
-  for (let iteration = 0; iteration < 30; iteration++) {
-    const next = new Float64Array(dimension);
-    for (const input of inputs) {
-      const along = product(input, 0, vector, 0, dimension);
-      for (let i = 0; i < dimension; i++) next[i] = (next[i] as number) + along * (input[i] as number);
-    }
-    const size = Math.sqrt(product(next, 0, next, 0, dimension));
+  for (let iteration = 0; iteration < 40; iteration++) {
+    const size = Math.sqrt(product(vector, 0, vector, 0, dimension));
     if (size === 0) return 0;
-    eigenvalue = size;
-    vector = next.map((value) => value / size);
+    const direction = vector.map((value) => value / size);
+    if (iteration > 0) eigenvalue = size;
+    vector = new Float64Array(dimension);
+    for (const input of inputs) addProjection(vector, input, direction);
   }
   return eigenvalue;
+}
+
+/** into += d (d·direction). */
+function addProjection(
+  into: Float64Array,
+  { starts, run, values }: SparseVector,
+  direction: Float64Array,
+): void {
+  let along = 0;
+  starts.forEach((start, block) => (along += product(values, run * block, direction, start, run)));
+  starts.forEach((start, block) => {
+    for (let i = 0; i < run; i++)
+      into[start + i] = (into[start + i] as number) + along * (values[run * block + i] as number);
+  });
 }

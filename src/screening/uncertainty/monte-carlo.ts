@@ -6,14 +6,15 @@ import { sumGroups } from "../sensor-field";
 import { RECTANGULAR } from "./families";
 import { backgroundVariance } from "./first-order";
 import { inputVectors, type InputVector } from "./input-vectors";
+import { PackedInputs } from "./packed-inputs";
 import { NearItems, type DrawOf } from "./near-items";
 import type { RandomStream } from "./random";
 
 export const DRAWS = 5000;
 /** Point of the distribution that value + U reaches. */
 const QUANTILE = 0.975;
-/** Inputs that together make less than this share of the variance are drawn as one. */
-const LUMPED_SHARE = 1e-6;
+/** Inputs that together make less than this share of the variance are left out: their effect is far below that of the number of draws. */
+const DROPPED_SHARE = 1e-3;
 
 /**
  * Expanded uncertainty by Monte Carlo (JCGM 101): all inputs are drawn, items in `near` are computed anew where each draw puts them,
@@ -38,24 +39,22 @@ export function monteCarloUncertainty(
   const bounds = new BoundDraws(judging, factors);
   const values = new Float64Array(DRAWS);
   const groups = new Float64Array(base.length);
-  const draws = new Map<string, number>();
+  const draws = new Float64Array(drawn.length);
+  const packed = new PackedInputs(drawn, judging.stride);
+  const places = new Map(drawn.map(({ kind, key }, index) => [`${kind} ${key}`, index]));
+  const drawOf: DrawOf = (kind, key) => draws[places.get(`${kind} ${key}`) ?? -1] ?? 0;
 
   for (let i = 0; i < DRAWS; i++) {
     groups.set(base);
-    draws.clear();
-    for (const { groups: change, kind, key } of drawn) {
-      const x = random.rectangular();
-      draws.set(`${kind} ${key}`, x);
-      for (let g = 0; g < groups.length; g++) groups[g] = (groups[g] as number) + x * (change[g] as number);
-    }
-    const drawOf: DrawOf = (kind, key) => draws.get(`${kind} ${key}`) ?? 0;
+    for (let input = 0; input < draws.length; input++) draws[input] = random.rectangular();
+    packed.addTo(groups, draws);
     nearItems?.addTo(groups, factors, drawOf);
     const state: MeasuredState = {
       groups,
       bounds: bounds.drawn(judging.background.bounds, sensor.positionToleranceM, drawOf, random),
       earth: earth && drawnEarth(earth, random),
     };
-    values[i] = judging.measure.measure(state).value + backgroundSigma * random.normal();
+    values[i] = judging.measure.value(state) + backgroundSigma * random.normal();
   }
   values.sort();
   const reach = values[Math.ceil(QUANTILE * DRAWS) - 1] as number;
@@ -74,7 +73,7 @@ function baseGroups(judging: LimitJudging, factors: CaseFactors, near: ReadonlyS
   return groups;
 }
 
-const sizeOf = ({ groups }: InputVector): number => product(groups, 0, groups, 0, groups.length);
+const sizeOf = ({ values }: InputVector): number => product(values, 0, values, 0, values.length);
 const needed = (input: InputVector): boolean => sizeOf(input) > 0;
 
 /** Leaves out inputs too small to tell, unless items drawn anew need every one of them. */
@@ -86,7 +85,7 @@ function droppingSmall(inputs: InputVector[], keepAll: boolean): InputVector[] {
   const small = new Set<InputVector>();
   for (const { input, size } of ascending) {
     dropped += size;
-    if (dropped > LUMPED_SHARE * total) break;
+    if (dropped > DROPPED_SHARE * total) break;
     small.add(input);
   }
   return inputs.filter((input) => !small.has(input));
@@ -116,9 +115,10 @@ class BoundDraws {
   ) {}
 
   drawn(background: Float64Array, toleranceM: number, draw: DrawOf, random: RandomStream): Float64Array {
-    const out = Float64Array.from(background);
     const { judging, factors } = this;
     const { bounds, plan } = judging.at;
+    if (plan.bounds.length === 0) return background;
+    const out = Float64Array.from(background);
     const own = toleranceM * RECTANGULAR;
     const power = judging.measure.width === 3 ? 3 : 4;
     plan.bounds.forEach(({ tolerancePercent }, index) => {

@@ -14,6 +14,8 @@ export interface StrayInput {
   group: number;
   /** Nine numbers for gradients, three for fields; T or T/m. */
   perUncertainty: Float64Array;
+  /** Length of `perUncertainty`. */
+  norm: number;
 }
 
 export function strayInputs(plan: CompiledPlan, position: Vector, width: 3 | 9): StrayInput[] {
@@ -22,7 +24,8 @@ export function strayInputs(plan: CompiledPlan, position: Vector, width: 3 | 9):
     if (source?.kind !== "circuit" || drive.order > 1 || !source.centreLine) return [];
     const boundA = source.circuit.strayToleranceA * source.shieldingFactor;
     if (boundA === 0) return [];
-    return [{ item, component, group, perUncertainty: centreLineField(source, position, width, boundA) }];
+    const perUncertainty = centreLineField(source, position, width, boundA);
+    return [{ item, component, group, perUncertainty, norm: Math.hypot(...perUncertainty) }];
   });
 }
 

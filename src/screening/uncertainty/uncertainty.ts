@@ -32,7 +32,8 @@ export function uncertaintiesOf(inputHash: string, sensorIndex: number): Uncerta
   return (judging, factors, state, measured) => {
     const { plan, sensor } = judging.at;
     const near = judging.at.nearItems(() => nearItems(plan, sensor));
-    const safe = near.length === 0 && !nearBounds(plan, sensor) && isResolved(judging, factors, state);
+    const safe =
+      near.length === 0 && !nearBounds(plan, sensor) && isResolved(judging, factors, state, measured);
     if (safe) {
       return {
         expanded: COVERAGE * standardUncertainty(judging, factors, state, measured),
