@@ -75,13 +75,7 @@ export function SectionStrip() {
           ? "through the middle of the view; select a sensor to slice through it"
           : `through ${frame.sensorName}`}
       </p>
-      <svg
-        width={width}
-        height={strip.heightPx}
-        className="block"
-        role="group"
-        aria-label="Section drawing"
-      >
+      <svg width={width} height={strip.heightPx} className="block" role="group" aria-label="Section drawing">
         <Scale lowM={lowM} highM={highM} px={px} py={py} width={width} centreX={centreX} scale={scale} />
         <SectionLines px={px} py={py} scale={scale} />
         {profilesOf(document).map(({ owner, points }) => (
