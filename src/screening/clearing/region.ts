@@ -43,7 +43,10 @@ export function isInRegion({ outline, fromHeightM, toHeightM }: Region, at: Vect
 }
 
 /** Whether a point lies in a polygon, by the parity of the edges to the right of it. */
-export function isInside(outline: readonly PlanPoint[], [x, y]: readonly [number, number, ...number[]]): boolean {
+export function isInside(
+  outline: readonly PlanPoint[],
+  [x, y]: readonly [number, number, ...number[]],
+): boolean {
   let inside = false;
   outline.forEach(([x1, y1], index) => {
     const [x2, y2] = outline[(index + 1) % outline.length] as PlanPoint;
