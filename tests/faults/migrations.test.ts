@@ -1,12 +1,15 @@
 import { cpSync, mkdtempSync, readFileSync, rmSync, writeFileSync } from "node:fs";
 import { tmpdir } from "node:os";
 import { join } from "node:path";
+import { drizzle } from "drizzle-orm/mysql2";
+import { migrate } from "drizzle-orm/mysql2/migrator";
 import { createConnection, type RowDataPacket } from "mysql2/promise";
 import { afterAll, beforeAll, beforeEach, expect, test } from "vitest";
 import { generateSecrets } from "../../scripts/services/local-environment";
 import { startMariaDb, type MariaDb } from "../../scripts/services/mariadb";
 import { freePortBlock } from "../../scripts/services/ports";
 import { inRepository } from "../../scripts/services/repository";
+import { ChainCheck, type ChainHead, type StoredLine } from "../../src/server/activity/chain";
 import { applyMigrations } from "../../src/server/db/migrations/apply-migrations";
 
 const name = "stillneedle_test_migrations";
@@ -16,7 +19,7 @@ let ownerUrl: string;
 let appUrl: string;
 
 async function query(url: string, ...statements: string[]): Promise<RowDataPacket[]> {
-  const connection = await createConnection({ uri: url });
+  const connection = await createConnection({ uri: url, timezone: "Z" });
   try {
     let rows: RowDataPacket[] = [];
     for (const statement of statements) [rows] = await connection.query<RowDataPacket[]>(statement);
@@ -28,6 +31,16 @@ async function query(url: string, ...statements: string[]): Promise<RowDataPacke
 
 const apply = (migrationsFolder = inRepository("drizzle"), lockTimeoutS = 60) =>
   applyMigrations({ ownerUrl, appUrl, migrationsFolder, lockTimeoutS });
+
+/** The tables alone, as an older version would have left them. */
+async function migrateOnly(migrationsFolder: string): Promise<void> {
+  const connection = await createConnection({ uri: ownerUrl });
+  try {
+    await migrate(drizzle(connection), { migrationsFolder });
+  } finally {
+    await connection.end();
+  }
+}
 
 beforeAll(async () => {
   folder = mkdtempSync(join(tmpdir(), "migrations-"));
@@ -119,4 +132,42 @@ test("two processes migrate one after the other, and who waits too long is told 
   await holder.query("select get_lock(left(concat('migrate ', database()), 64), 0)");
   await expect(apply(undefined, 0)).rejects.toMatchObject({ kind: "locked" });
   await holder.end();
+});
+
+test("lines of the activity log from before it was a chain are chained once, in their order", async () => {
+  const before = join(folder, "before-the-chain");
+  cpSync(inRepository("drizzle"), before, { recursive: true });
+  const journalFile = join(before, "meta/_journal.json");
+  const journal = JSON.parse(readFileSync(journalFile, "utf8")) as { entries: { idx: number }[] };
+  journal.entries = journal.entries.filter(({ idx }) => idx < 4);
+  writeFileSync(journalFile, JSON.stringify(journal));
+  await migrateOnly(before);
+  const organisationId = crypto.randomUUID();
+  const line = (at: string, event: string) =>
+    `insert into activity_log values (uuid(), '${organisationId}', '${at}', null, '${event}', 'site', null, '{"name":"Ærø"}')`;
+  await query(
+    ownerUrl,
+    `insert into organisations values ('${organisationId}', 'old', 'Old', '2026-01-01 00:00:00.000')`,
+    line("2026-03-02 10:00:00.125", "site.changed"),
+    line("2026-03-01 10:00:00.000", "site.created"),
+  );
+  await apply();
+  const faultsNow = async () => {
+    const check = new ChainCheck();
+    const rows = await query(
+      ownerUrl,
+      `select id, organisation_id as organisationId, sequence, at, actor_id as actorId, event, subject_kind as subjectKind,
+         subject_id as subjectId, detail, previous_hash as previousHash, hash from activity_log order by sequence`,
+    );
+    for (const row of rows) check.take(row as unknown as StoredLine);
+    const [head] = await query(ownerUrl, "select sequence, hash from activity_heads");
+    expect(check.finish(head as unknown as ChainHead)).toBe(2);
+    expect(rows.map(({ event }) => event as string)).toEqual(["site.created", "site.changed"]);
+    return check.faults;
+  };
+  expect(await faultsNow()).toEqual([]);
+  await query(ownerUrl, "update activity_log set hash = '', event = 'site.lost' where sequence = 2");
+  await apply();
+  await query(ownerUrl, "update activity_log set event = 'site.changed' where sequence = 2");
+  expect(await faultsNow()).not.toEqual([]);
 });

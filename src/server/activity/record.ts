@@ -1,6 +1,7 @@
 import type { ActivityEvent, ActivitySubject } from "~/domain/activity";
 import type { Queryable } from "../db/client";
-import { insertActivity } from "../db/queries/activity";
+import { insertActivity, lockHead, moveHead } from "../db/queries/activity";
+import { hashOfLine } from "./chain";
 
 export interface Deed {
   organisationId: string;
@@ -9,16 +10,29 @@ export interface Deed {
   event: ActivityEvent;
   subjectKind: ActivitySubject;
   subjectId: string | null;
-  /** What changed; no secrets, no addresses. */
+  /** What changed; no secrets, no addresses, no names of people. */
   detail?: Record<string, unknown>;
 }
 
-/** Adds a line to the activity log; call it in the transaction of the deed itself. */
-export async function recordActivity(db: Queryable, deed: Deed): Promise<void> {
-  await insertActivity(db, {
-    ...deed,
-    id: crypto.randomUUID(),
+/**
+ * Adds a line to the organisation's activity log. Call it in the transaction of the deed itself, and after everything
+ * else that locks: until that transaction ends nobody else of the organisation can add a line.
+ */
+export async function recordActivity(tx: Queryable, deed: Deed): Promise<void> {
+  const { organisationId, actorId, event, subjectKind, subjectId, detail = {} } = deed;
+  const head = await lockHead(tx, organisationId);
+  const fields = {
+    organisationId,
+    sequence: head.sequence + 1,
     at: new Date(),
-    detail: JSON.stringify(deed.detail ?? {}),
-  });
+    actorId,
+    event,
+    subjectKind,
+    subjectId,
+    detail: JSON.stringify(detail),
+    previousHash: head.hash,
+  };
+  const hash = hashOfLine(fields);
+  await insertActivity(tx, { ...fields, id: crypto.randomUUID(), hash });
+  await moveHead(tx, organisationId, { sequence: fields.sequence, hash });
 }

@@ -38,6 +38,7 @@ export async function startSignIn(cookies: AstroCookies, wanted: Wanted): Promis
     organisationId: organisation?.id ?? null,
     returnTo: safeReturnTo(wanted.returnTo),
     subject: null,
+    invitationLinkId: null,
   });
   return { goTo: url.href };
 }

@@ -1,4 +1,6 @@
+import { chainStart } from "../activity/chain";
 import type { Queryable } from "../db/client";
+import { insertHead } from "../db/queries/activity";
 import { insertOrganisation } from "../db/queries/organisations";
 
 /** A short name for addresses: `Quillhaven Instruments` becomes `quillhaven-instruments`. */
@@ -18,5 +20,6 @@ export async function createOrganisation(tx: Queryable, name: string): Promise<s
   if (slug === "") throw new Error("The organisation's name needs a letter a–z or a digit.");
   const id = crypto.randomUUID();
   await insertOrganisation(tx, { id, slug, name, createdAt: new Date() });
+  await insertHead(tx, id, chainStart);
   return id;
 }

@@ -23,7 +23,7 @@ export async function addContact(
         event: "contact.added",
         subjectKind: "site",
         subjectId: site.id,
-        detail: { contactId: id, name: input.name, duty: input.duty },
+        detail: { contactId: id, duty: input.duty },
       });
     });
   } catch (error) {
@@ -44,7 +44,7 @@ export async function removeContact(member: Member, contact: SiteContactRow): Pr
       event: "contact.removed",
       subjectKind: "site",
       subjectId: contact.siteId,
-      detail: { contactId: contact.id, name: contact.name, duty: contact.duty },
+      detail: { contactId: contact.id, duty: contact.duty },
     });
   });
 }

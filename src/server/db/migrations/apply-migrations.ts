@@ -1,6 +1,7 @@
 import { drizzle } from "drizzle-orm/mysql2";
 import { migrate } from "drizzle-orm/mysql2/migrator";
 import { createConnection, type Connection, type RowDataPacket } from "mysql2/promise";
+import { chainOldActivity } from "./chain-activity";
 import { grantToApplication } from "./grants";
 import { appliedMigrations, checkHistory, knownMigrations } from "./history";
 import { MigrationFailure } from "./migration-failure";
@@ -27,6 +28,7 @@ export async function applyMigrations(task: MigrationTask): Promise<number> {
     const applied = await appliedMigrations(connection);
     checkHistory(applied, known);
     await migrate(drizzle(connection), { migrationsFolder: task.migrationsFolder });
+    await chainOldActivity(connection);
     await grantToApplication(connection, task.appUrl);
     return known.length - applied.length;
   } finally {

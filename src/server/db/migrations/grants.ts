@@ -3,6 +3,8 @@ import { MigrationFailure } from "./migration-failure";
 
 /** What is written once and never changed: the application's user may only add to it and read it. */
 const appendOnlyTables = new Set(["activity_log"]);
+/** Its rows move on and never go. */
+const headsTable = "activity_heads";
 const migrationsTable = "__drizzle_migrations";
 
 interface Account {
@@ -28,6 +30,7 @@ export async function grantToApplication(owner: Connection, appUrl: string): Pro
 
 function rightsOn(table: string): string {
   if (table === migrationsTable) return "select";
+  if (table === headsTable) return "select, insert, update";
   return appendOnlyTables.has(table) ? "select, insert" : "select, insert, update, delete";
 }
 

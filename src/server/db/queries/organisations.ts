@@ -1,4 +1,4 @@
-import { eq } from "drizzle-orm";
+import { asc, eq } from "drizzle-orm";
 import type { Queryable } from "../client";
 import { organisations } from "../schema/people";
 
@@ -17,6 +17,10 @@ export async function findOrganisation(db: Queryable, organisationId: string) {
 export async function findOrganisationBySlug(db: Queryable, slug: string) {
   const [row] = await db.select().from(organisations).where(eq(organisations.slug, slug));
   return row;
+}
+
+export async function listOrganisations(db: Queryable) {
+  return db.select().from(organisations).orderBy(asc(organisations.slug));
 }
 
 /** Makes others who change this organisation's members wait for the end of the transaction. */

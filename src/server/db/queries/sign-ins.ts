@@ -4,7 +4,10 @@ import { pendingSignIns, signInLinks } from "../schema/people";
 
 export type PendingSignIn = typeof pendingSignIns.$inferSelect;
 
-export async function insertPendingSignIn(db: Queryable, row: PendingSignIn): Promise<void> {
+export async function insertPendingSignIn(
+  db: Queryable,
+  row: typeof pendingSignIns.$inferInsert,
+): Promise<void> {
   await db.insert(pendingSignIns).values(row);
 }
 

@@ -1,7 +1,8 @@
 import { foreignKey, index, int, mysqlTable, unique, varchar } from "drizzle-orm/mysql-core";
-import type { DeliveryState } from "~/domain/delivery";
+import type { DeliveryKind, DeliveryState } from "~/domain/delivery";
 import type { NoticeKind, NoticeState } from "~/domain/notice";
 import { code, exactText, id, instant, label } from "../columns";
+import { invitations } from "./invitations";
 import { organisations, users } from "./people";
 import { screenings } from "./plans";
 
@@ -62,7 +63,8 @@ export const noticeRecipients = mysqlTable(
 
 /**
  * The outbox: one row for each message, written in the transaction of what it tells of and claimed by the delivery
- * worker. A notice's message names its recipient; a sign-in message names the person, and its token is made when it is sent.
+ * worker. A notice's message names its recipient; a sign-in message names the person and an invitation's message the invitation; their tokens are made when
+ * they are sent.
  */
 export const deliveries = mysqlTable(
   "deliveries",
@@ -71,11 +73,12 @@ export const deliveries = mysqlTable(
     organisationId: id("organisation_id")
       .notNull()
       .references(() => organisations.id),
-    kind: code("kind", { length: 16 }).$type<"notice" | "sign-in-link">().notNull(),
+    kind: code("kind", { length: 16 }).$type<DeliveryKind>().notNull(),
     recipientId: id("recipient_id")
       .unique()
       .references(() => noticeRecipients.id, { onDelete: "cascade" }),
     userId: id("user_id").references(() => users.id, { onDelete: "cascade" }),
+    invitationId: id("invitation_id").references(() => invitations.id, { onDelete: "cascade" }),
     messageId: code("message_id", { length: 128 }).notNull().unique(),
     state: code("state", { length: 16 }).$type<DeliveryState>().notNull(),
     attempts: int("attempts").notNull(),

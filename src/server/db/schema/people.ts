@@ -20,6 +20,10 @@ export const users = mysqlTable(
     /** Where mail for this person goes; never an identity. Lower case. */
     email: varchar("email", { length: 254 }).notNull(),
     createdAt: instant("created_at").notNull(),
+    /** When they stopped being a member: they cannot sign in, and what they did keeps their name. */
+    removedAt: instant("removed_at"),
+    /** When name and address of a former member were overwritten. */
+    erasedAt: instant("erased_at"),
   },
   (t) => [
     unique("users_email").on(t.organisationId, t.email),
@@ -94,6 +98,8 @@ export const pendingSignIns = mysqlTable(
     returnTo: varchar("return_to", { length: 512 }).notNull(),
     /** Who the provider vouched for, while that person still has to say for which organisation; null before. */
     subject: code("subject", { length: 255 }),
+    /** Hash of the invitation's token, where somebody is about to accept one through the provider. */
+    invitationLinkId: sha256Hex("invitation_link_id"),
     expiresAt: instant("expires_at").notNull(),
   },
   (t) => [index("pending_sign_ins_expiry").on(t.expiresAt)],
@@ -128,14 +134,30 @@ export const rateLimits = mysqlTable(
   ],
 );
 
-/** Who did what, when. Append-only: the application's database user may not change or remove a row. */
+/**
+ * The newest line of each organisation's activity log; whoever adds a line holds this row until the end of their
+ * transaction, so that the lines follow each other strictly. Made with the organisation.
+ */
+export const activityHeads = mysqlTable("activity_heads", {
+  organisationId: id("organisation_id")
+    .primaryKey()
+    .references(() => organisations.id),
+  /** 0 before the first line. */
+  sequence: int("sequence").notNull(),
+  hash: sha256Hex("hash").notNull(),
+});
+
+/** Who did what, when, as one hash chain for each organisation. Append-only: the application's database user may not change or remove a row. */
 export const activityLog = mysqlTable(
   "activity_log",
   {
     id: id("id").primaryKey(),
+    // Not to the organisation itself: checking that key would wait for whoever changes its members, who waits for the head.
     organisationId: id("organisation_id")
       .notNull()
-      .references(() => organisations.id),
+      .references(() => activityHeads.organisationId),
+    /** 1, 2, 3 … in each organisation, without a gap. */
+    sequence: int("sequence").notNull(),
     at: instant("at").notNull(),
     /** Null when the service itself acted. No foreign key: the log outlives people. */
     actorId: id("actor_id"),
@@ -144,6 +166,13 @@ export const activityLog = mysqlTable(
     subjectId: id("subject_id"),
     /** JSON of what changed. */
     detail: exactText("detail").notNull(),
+    /** Of the line before; 64 zeros before the first. */
+    previousHash: sha256Hex("previous_hash").notNull(),
+    /** SHA-256 over the canonical JSON of all fields above but the id. */
+    hash: sha256Hex("hash").notNull(),
   },
-  (t) => [index("activity_log_time").on(t.organisationId, t.at)],
+  (t) => [
+    unique("activity_log_sequence").on(t.organisationId, t.sequence),
+    index("activity_log_time").on(t.organisationId, t.at),
+  ],
 );
