@@ -18,6 +18,9 @@ const quantities: readonly { value: MapQuantity | "off"; label: string }[] = [
   { value: "heading", label: "heading error" },
 ];
 
+/** Where a map lies while no sensor is selected: on a bench. */
+const usualHeightM = 1.1;
+
 /** What the contour lines on the drawing show. */
 export function MapPanel() {
   const store = useSheetStore();
@@ -33,9 +36,16 @@ export function MapPanel() {
         ...store.get().map,
         settings: next,
         problem: null,
-        ...(next === null && { mapped: null, section: null }),
+        ...(next?.quantity !== settings?.quantity && { mapped: null, section: null }),
       },
     });
+  /** The load case that governs the selected sensor, so that map and ledger say the same of it. */
+  const governingCase = (quantity: MapQuantity): string | null => {
+    const { live } = store.get();
+    const result =
+      live.kind === "screened" ? live.result.sensors.find(({ id }) => id === selected?.id) : undefined;
+    return result?.findings.find(({ kind }) => kind === quantity)?.loadCaseId ?? null;
+  };
   const noEarth = document.earthField === null;
   return (
     <div className="grid gap-3">
@@ -48,7 +58,11 @@ export function MapPanel() {
           set(
             quantity === "off"
               ? null
-              : { loadCaseId: null, heightM: selectedHeightM ?? 1.1, ...settings, quantity },
+              : {
+                  heightM: selectedHeightM ?? settings?.heightM ?? usualHeightM,
+                  loadCaseId: governingCase(quantity) ?? settings?.loadCaseId ?? null,
+                  quantity,
+                },
           )
         }
       />

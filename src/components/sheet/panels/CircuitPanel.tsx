@@ -1,7 +1,7 @@
 import type { ReactNode } from "react";
 import { Button } from "~/components/ui/Button";
 import type { Arrangement } from "~/domain/plan-document/arrangement";
-import { CURRENT_TOLERANCE_PERCENT, type Circuit } from "~/domain/plan-document/circuit";
+import type { Circuit } from "~/domain/plan-document/circuit";
 import {
   addCircuitToRoute,
   arrangementOf,
@@ -16,8 +16,8 @@ import { CommitField } from "../inputs/CommitField";
 import { NumberField } from "../inputs/NumberField";
 import { beginStep, focusDrawing } from "../StepBar";
 import { useDocument, useEditable, useSheetStore } from "../store";
-import type { ChangeCircuit } from "./changes";
 import { SupplyFields } from "./SupplyFields";
+import { ToleranceFields } from "./ToleranceFields";
 import { VertexList } from "./VertexList";
 
 function arrangementOptions(circuit: Circuit): { value: Arrangement["kind"]; label: string }[] {
@@ -137,7 +137,7 @@ export function CircuitPanel({ circuit }: { circuit: Circuit }) {
           }
         />
       </div>
-      <Tolerances circuit={circuit} change={change} disabled={disabled} />
+      <ToleranceFields circuit={circuit} change={change} disabled={disabled} />
       {route !== null && (
         <fieldset className="grid grid-cols-2 gap-3">
           <legend className="mb-1 text-sm font-semibold">Place in the route, seen along it</legend>
@@ -201,61 +201,4 @@ export function CircuitPanel({ circuit }: { circuit: Circuit }) {
 
 export function Notice({ children }: { children: ReactNode }) {
   return <div className="message message-undecided grid justify-items-start">{children}</div>;
-}
-
-function Tolerances({
-  circuit,
-  change,
-  disabled,
-}: {
-  circuit: Circuit;
-  change: ChangeCircuit;
-  disabled: boolean;
-}) {
-  const byBasis = CURRENT_TOLERANCE_PERCENT[circuit.currentBasis];
-  const isSingle = circuit.arrangement.kind === "single";
-  return (
-    <div className="grid grid-cols-2 gap-3">
-      <NumberField
-        label="Tolerance of the current"
-        unit="%"
-        least={0}
-        most={1000}
-        value={circuit.currentTolerancePercent}
-        placeholder={`${byBasis} by basis`}
-        hint="Empty: by the basis."
-        disabled={disabled}
-        onEmpty={() => change("Tolerance", (present) => ({ ...present, currentTolerancePercent: null }))}
-        onChange={(currentTolerancePercent) =>
-          change("Tolerance", (present) => ({ ...present, currentTolerancePercent }))
-        }
-      />
-      <NumberField
-        label="Position tolerance"
-        unit="mm"
-        perUnit={1000}
-        least={0}
-        most={100}
-        value={circuit.positionToleranceM}
-        disabled={disabled}
-        onChange={(positionToleranceM) =>
-          change("Position tolerance", (present) => ({ ...present, positionToleranceM }))
-        }
-      />
-      {!isSingle && (
-        <NumberField
-          label="Stray current"
-          unit="A"
-          least={-1e6}
-          most={1e6}
-          value={circuit.strayCurrentA}
-          placeholder="not known"
-          hint="Empty: not known, 1 % of the current is allowed for."
-          disabled={disabled}
-          onEmpty={() => change("Stray current", (present) => ({ ...present, strayCurrentA: null }))}
-          onChange={(strayCurrentA) => change("Stray current", (present) => ({ ...present, strayCurrentA }))}
-        />
-      )}
-    </div>
-  );
 }
