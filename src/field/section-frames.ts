@@ -22,6 +22,8 @@ export type FramedPath = { ok: true; frames: SectionFrames } | { ok: false; mess
 
 const BEVEL_COSINE = Math.cos((120 * Math.PI) / 180);
 const VERTICAL_COSINE = Math.cos(Math.PI / 180);
+/** Points nearer to each other than this are one point, metres: below the rounding of coordinates in a large plan. */
+const COINCIDENT_M = 1e-9;
 /** Legs that turn less than this (rad) are one leg. */
 const COLLINEAR_RAD = 1e-9;
 /** Turns nearer to 180° than this (rad) have no bisector. */
@@ -94,7 +96,7 @@ function cleanPoints(path: readonly Vector[]): { points: Vector[]; zeroSegments:
   let zeroSegments = 0;
   for (const point of path) {
     const last = points[points.length - 1];
-    if (last && distance(last, point) === 0) {
+    if (last && distance(last, point) <= COINCIDENT_M) {
       zeroSegments += 1;
       continue;
     }
