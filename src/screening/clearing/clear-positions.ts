@@ -44,7 +44,8 @@ export function* clearPositionsOf(
   for (const entry of found) {
     yield { done: suggestions.length, total: found.length };
     const settled = settle(sensor, region, entry);
-    if (settled) suggestions.push({ ...settled, bearingDeg: bearingDeg(own.position, settled.position, north) });
+    if (settled)
+      suggestions.push({ ...settled, bearingDeg: bearingDeg(own.position, settled.position, north) });
   }
   suggestions.sort((a, b) => a.distanceM - b.distanceM);
   const { kind, zoneName, fromHeightM, toHeightM, furthestM } = region;
