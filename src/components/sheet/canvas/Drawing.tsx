@@ -46,9 +46,10 @@ export function Drawing({ planId }: { planId: string }) {
     return () => observer.disconnect();
   }, [store]);
 
-  // A newly laid drawing is shown whole.
+  // A drawing that is newly laid, or whose scale has changed, is shown whole.
   const drawingId = sheet?.drawingId;
-  useEffect(() => fitView(store), [store, drawingId]);
+  const metresPerPixel = sheet?.metresPerPixel;
+  useEffect(() => fitView(store), [store, drawingId, metresPerPixel]);
 
   const dataView = useMemo(() => JSON.stringify(view), [view]);
   return (
