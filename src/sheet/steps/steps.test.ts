@@ -95,7 +95,10 @@ describe("trace route", () => {
 
   it("slopes where that is chosen", () => {
     const bench = new StepBench(beginTraceRoute(null, 0), empty).press([0, 0]).type("height", "2");
-    bench.type("change", "slope").press([4, 0]);
+    expect(bench.step.instruction).toContain("rises or drops straight here");
+    bench.type("change", "slope");
+    expect(bench.step.instruction).toContain("slopes to the next point");
+    bench.press([4, 0]);
     expect(bench.key("Enter").finished.document.routes[0]?.path).toEqual([
       [0, 0, 0],
       [4, 0, 2],
