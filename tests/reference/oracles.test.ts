@@ -102,8 +102,7 @@ function screened(document: PlanDocument) {
     return result;
   } catch (error) {
     if (!(error instanceof RefusedDocumentError)) throw error;
-    fc.pre(false);
-    throw error;
+    return fc.pre(false);
   }
 }
 

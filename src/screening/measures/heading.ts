@@ -1,6 +1,8 @@
 import { degrees } from "~/domain/units";
 import { blankMeasured, type Measure } from "./measure";
 
+const FLOOR_T = 1e-18;
+
 /**
  * Compass deviation |δ| in degrees, δ = atan2(b⊥, H + b∥) of the horizontal DC disturbance; a bound b (T) adds asin(b/R₀)
  * with R₀ the disturbed horizontal field, 180° where b ≥ R₀. Throws without an Earth field.
@@ -15,7 +17,8 @@ export const headingMeasure: Measure = (state) => {
   const alongNorth = x * northward[0] + y * northward[1];
   const towardEast = x * eastward[0] + y * eastward[1];
   const north = elements.horizontalT + alongNorth;
-  const squared = north * north + towardEast * towardEast;
+  // A field that cancels the Earth's to nothing turns the needle anywhere; a floor far below any field keeps the slopes finite.
+  const squared = Math.max(north * north + towardEast * towardEast, FLOOR_T ** 2);
   const r0 = Math.sqrt(squared);
   const deviation = Math.atan2(towardEast, north);
   const sign = deviation < 0 ? -1 : 1;

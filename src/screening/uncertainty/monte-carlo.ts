@@ -3,11 +3,11 @@ import type { CaseFactors } from "../load-cases";
 import { product, type Measured, type MeasuredState } from "../measures/measure";
 import type { PlanEarth } from "../earth";
 import { sumGroups } from "../sensor-field";
-import { RECTANGULAR } from "./families";
+import { RECTANGULAR, type FamilyKind } from "./families";
 import { backgroundVariance } from "./first-order";
 import { inputVectors, type InputVector } from "./input-vectors";
 import { PackedInputs } from "./packed-inputs";
-import { NearItems, type DrawOf } from "./near-items";
+import type { NearItems } from "./near-items";
 import type { RandomStream } from "./random";
 
 export const DRAWS = 5000;
@@ -25,30 +25,35 @@ export function monteCarloUncertainty(
   factors: CaseFactors,
   measured: Measured,
   near: readonly number[],
+  nearItems: NearItems | null,
   random: RandomStream,
 ): number {
-  const { plan, earth, sensor } = judging.at;
+  const { earth, sensor } = judging.at;
   const nearSet = new Set(near);
   const base = baseGroups(judging, factors, nearSet);
-  const inputs = inputVectors(judging, factors, measured.slope, nearSet).filter(
-    (input) => needed(input) || near.length > 0,
+  const inputs = inputVectors(judging, factors, measured.slope, nearSet);
+  const drawn = nearItems ? inputs : droppingSmall(inputs);
+  const shared = drawn.map(({ kind, key }) => nearItems?.drawsOf(kind, key));
+  const draws = new Float64Array(drawn.length);
+  const packed = new PackedInputs(drawn, judging.stride);
+  const places = new Map(drawn.map(({ kind, key }, index) => [`${kind} ${key}`, index]));
+  const drawOf = (kind: FamilyKind, key: number) => draws[places.get(`${kind} ${key}`) ?? -1] ?? 0;
+  const currentPlaces = drawn.flatMap(({ kind, key }, index) =>
+    kind === "current" ? [[key, index] as const] : [],
   );
-  const drawn = droppingSmall(inputs, near.length > 0);
-  const nearItems = near.length > 0 ? new NearItems(judging, near) : null;
+  const currentIndex = new Map(currentPlaces);
+  const currentDraw = (key: number) => draws[currentIndex.get(key) ?? -1] ?? 0;
   const backgroundSigma = Math.sqrt(backgroundVariance(judging, measured));
   const bounds = new BoundDraws(judging, factors);
   const values = new Float64Array(DRAWS);
   const groups = new Float64Array(base.length);
-  const draws = new Float64Array(drawn.length);
-  const packed = new PackedInputs(drawn, judging.stride);
-  const places = new Map(drawn.map(({ kind, key }, index) => [`${kind} ${key}`, index]));
-  const drawOf: DrawOf = (kind, key) => draws[places.get(`${kind} ${key}`) ?? -1] ?? 0;
 
   for (let i = 0; i < DRAWS; i++) {
     groups.set(base);
-    for (let input = 0; input < draws.length; input++) draws[input] = random.rectangular();
+    for (let input = 0; input < draws.length; input++)
+      draws[input] = shared[input]?.[i] ?? random.rectangular();
     packed.addTo(groups, draws);
-    nearItems?.addTo(groups, factors, drawOf);
+    nearItems?.addTo(groups, i, factors, judging.included, currentDraw);
     const state: MeasuredState = {
       groups,
       bounds: bounds.drawn(judging.background.bounds, sensor.positionToleranceM, drawOf, random),
@@ -57,8 +62,7 @@ export function monteCarloUncertainty(
     values[i] = judging.measure.value(state) + backgroundSigma * random.normal();
   }
   values.sort();
-  const reach = values[Math.ceil(QUANTILE * DRAWS) - 1] as number;
-  return plan.components.length + plan.bounds.length === 0 ? 0 : Math.max(0, reach - measured.value);
+  return Math.max(0, (values[Math.ceil(QUANTILE * DRAWS) - 1] as number) - measured.value);
 }
 
 /** Groups of everything that moves linearly, background included. */
@@ -74,11 +78,8 @@ function baseGroups(judging: LimitJudging, factors: CaseFactors, near: ReadonlyS
 }
 
 const sizeOf = ({ values }: InputVector): number => product(values, 0, values, 0, values.length);
-const needed = (input: InputVector): boolean => sizeOf(input) > 0;
-
-/** Leaves out inputs too small to tell, unless items drawn anew need every one of them. */
-function droppingSmall(inputs: InputVector[], keepAll: boolean): InputVector[] {
-  if (keepAll) return inputs;
+/** Leaves out inputs too small to tell. */
+function droppingSmall(inputs: InputVector[]): InputVector[] {
   const ascending = inputs.map((input) => ({ input, size: sizeOf(input) })).sort((a, b) => a.size - b.size);
   const total = ascending.reduce((sum, { size }) => sum + size, 0);
   let dropped = 0;
@@ -114,7 +115,12 @@ class BoundDraws {
     private readonly factors: CaseFactors,
   ) {}
 
-  drawn(background: Float64Array, toleranceM: number, draw: DrawOf, random: RandomStream): Float64Array {
+  drawn(
+    background: Float64Array,
+    toleranceM: number,
+    draw: (kind: FamilyKind, key: number) => number,
+    random: RandomStream,
+  ): Float64Array {
     const { judging, factors } = this;
     const { bounds, plan } = judging.at;
     if (plan.bounds.length === 0) return background;

@@ -1,104 +1,139 @@
+import type { Sensor } from "~/domain/plan-document/sensor";
 import type { Vector } from "~/field/vector";
-import type { LimitJudging } from "../judging";
+import type { CompiledPlan } from "../compile";
 import type { CaseFactors } from "../load-cases";
 import type { SourceItem } from "../source-item";
-import { RECTANGULAR } from "./families";
+import { RECTANGULAR, SENSOR_AXES, type FamilyKind, type InputFamily } from "./families";
+import type { RandomStream } from "./random";
 import { frameOf } from "./sensor-families";
 
-/** A unit-variance draw of the input of a family's key; 0 where a family has no such input. */
-export type DrawOf = (kind: "current" | "u" | "v" | "x" | "y" | "z", key: number) => number;
+interface NearItem {
+  item: SourceItem;
+  components: number[];
+  /** Key of the item's current in its family; −1 where it is certain. */
+  currentKey: number;
+  /** Influence matrix of the item's sets, one after another for every draw. */
+  influence: Float64Array;
+}
 
-/** Adds the field of items close to the sensor, computed anew where a draw puts them, to the groups. */
+/**
+ * Items close to one sensor, computed anew for every draw of their place and of the sensor's. The places are drawn once a sensor, so
+ * that limits and load cases share what they cost.
+ */
 export class NearItems {
-  private readonly perItem: {
-    item: SourceItem;
-    index: number;
-    along: { u: Vector; v: Vector } | null;
-    components: number[];
-    influence: Float64Array;
-  }[];
+  private readonly items: NearItem[];
+  private readonly places = new Map<string, Float64Array>();
 
   constructor(
-    private readonly judging: LimitJudging,
+    private readonly plan: CompiledPlan,
+    private readonly sensor: Sensor,
+    private readonly width: 3 | 9,
+    private readonly families: readonly InputFamily[],
     indices: readonly number[],
+    private readonly drawCount: number,
+    random: RandomStream,
   ) {
-    const { plan, sensor } = judging.at;
-    this.perItem = indices.flatMap((index) => {
+    this.items = indices.flatMap((index) => {
       const item = plan.items[index];
-      if (!item) return [];
-      const components = plan.components.flatMap((component, c) =>
-        component.item === index && judging.included[c] ? [c] : [],
-      );
-      const influence = new Float64Array(judging.measure.width * item.sets.length);
-      return [{ item, index, along: frameOf(plan, item, sensor.position), components, influence }];
+      const components = plan.components.flatMap((component, c) => (component.item === index ? [c] : []));
+      const [first] = components;
+      if (!item || first === undefined) return [];
+      const influence = this.drawnInfluence(item, first, random);
+      return [{ item, components, currentKey: this.keyOf("current", first), influence }];
     });
   }
 
-  addTo(groups: Float64Array, factors: CaseFactors, draw: DrawOf): void {
-    const { width } = this.judging.measure;
-    for (const { item, index, along, components, influence } of this.perItem) {
-      const [first] = components;
-      if (first === undefined) continue;
-      const [x, y, z] = this.displaced(item, along, first, draw);
-      influence.fill(0);
-      item.sets.forEach((set, k) => {
-        if (width === 3) set.addField(x, y, z, influence, 3 * k);
-        else set.addGradient(x, y, z, influence, 9 * k);
-      });
-      const scale = (factors.items[index] as number) * item.shieldingFactor;
-      for (const component of components) this.addComponent(groups, component, influence, scale, draw);
-    }
+  /** The draws of a place that near items share with the rest; undefined where none of them depends on it. */
+  drawsOf(kind: string, key: number): Float64Array | undefined {
+    return this.places.get(`${kind} ${key}`);
   }
 
-  /** Where the sensor stands as seen from the item: it moves itself, and the item moves the other way. */
-  private displaced(
-    item: SourceItem,
-    along: { u: Vector; v: Vector } | null,
-    component: number,
-    draw: DrawOf,
-  ): Vector {
-    const { sensor } = this.judging.at;
-    const own = sensor.positionToleranceM * RECTANGULAR;
-    const moved = [draw("x", 0) * own, draw("y", 0) * own, draw("z", 0) * own];
-    const tolerance = item.kind === "circuit" ? item.circuit.positionToleranceM * RECTANGULAR : 0;
-    const u = draw("u", this.keyOf("u", component)) * tolerance;
-    const v = draw("v", this.keyOf("v", component)) * tolerance;
-    const at = (i: 0 | 1 | 2) =>
-      sensor.position[i] + (moved[i] as number) - (along ? u * along.u[i] + v * along.v[i] : 0);
-    return [at(0), at(1), at(2)];
+  /** Adds the items' included components in one draw to the groups; `currentDraw` gives the draw of a current's key. */
+  addTo(
+    groups: Float64Array,
+    draw: number,
+    factors: CaseFactors,
+    included: readonly boolean[],
+    currentDraw: (key: number) => number,
+  ): void {
+    for (const { item, components, currentKey, influence } of this.items) {
+      const from = draw * this.width * item.sets.length;
+      const percent =
+        item.kind === "circuit" ? item.circuit.currentTolerancePercent : item.equipment.tolerancePercent;
+      const excess = currentDraw(currentKey) * percent * 0.01 * RECTANGULAR;
+      for (const component of components) {
+        if (included[component]) this.addComponent(groups, component, influence, from, factors, excess);
+      }
+    }
   }
 
   private addComponent(
     groups: Float64Array,
     component: number,
     influence: Float64Array,
-    scale: number,
-    draw: DrawOf,
+    from: number,
+    factors: CaseFactors,
+    excess: number,
   ): void {
-    const { at, measure, stride } = this.judging;
-    const entry = at.plan.components[component];
-    const item = entry && at.plan.items[entry.item];
+    const entry = this.plan.components[component];
+    const item = entry && this.plan.items[entry.item];
     if (!entry || !item) return;
-    const percent =
-      item.kind === "circuit" ? item.circuit.currentTolerancePercent : item.equipment.tolerancePercent;
-    const excess = draw("current", this.keyOf("current", component)) * percent * 0.01 * RECTANGULAR;
+    const { width } = this;
+    const scale = (factors.items[entry.item] as number) * item.shieldingFactor;
     const { currents, scaling } = entry.drive;
-    const to = stride * entry.group;
+    const to = 2 * width * entry.group;
     for (let k = 0; k < item.sets.length; k++) {
       const re = scale * ((currents[2 * k] as number) + excess * (scaling[2 * k] as number));
       const im = scale * ((currents[2 * k + 1] as number) + excess * (scaling[2 * k + 1] as number));
-      for (let i = 0; i < measure.width; i++) {
-        const g = influence[measure.width * k + i] as number;
+      for (let i = 0; i < width; i++) {
+        const g = influence[from + width * k + i] as number;
         groups[to + i] = (groups[to + i] as number) + re * g;
-        groups[to + measure.width + i] = (groups[to + measure.width + i] as number) + im * g;
+        groups[to + width + i] = (groups[to + width + i] as number) + im * g;
       }
     }
   }
 
-  private keyOf(kind: "current" | "u" | "v", component: number): number {
-    const family = this.judging.at
-      .familiesFor(this.judging.measure.width)
-      .find((entry) => entry.kind === kind);
-    return family?.keys[component] ?? -1;
+  /** The sensor moves itself, and the item moves the other way: the sets are looked at from the difference. */
+  private drawnInfluence(item: SourceItem, component: number, random: RandomStream): Float64Array {
+    const { sensor, width, drawCount } = this;
+    const along = frameOf(this.plan, item, sensor.position);
+    const own = SENSOR_AXES.map((axis) => this.placeDraws(axis, 0, sensor.positionToleranceM, random));
+    const tolerance = item.kind === "circuit" ? item.circuit.positionToleranceM : 0;
+    const u = this.placeDraws("u", this.keyOf("u", component), tolerance, random);
+    const v = this.placeDraws("v", this.keyOf("v", component), tolerance, random);
+    const influence = new Float64Array(drawCount * width * item.sets.length);
+    for (let draw = 0; draw < drawCount; draw++) {
+      const [x, y, z] = sensor.position.map((c, i) => {
+        const moved = (own[i]?.[draw] ?? 0) * sensor.positionToleranceM * RECTANGULAR;
+        const [ui, vi] = [along?.u[i] ?? 0, along?.v[i] ?? 0];
+        return c + moved - ((u?.[draw] ?? 0) * ui + (v?.[draw] ?? 0) * vi) * tolerance * RECTANGULAR;
+      }) as unknown as Vector;
+      item.sets.forEach((set, k) => {
+        const at = width * (draw * item.sets.length + k);
+        if (width === 3) set.addField(x, y, z, influence, at);
+        else set.addGradient(x, y, z, influence, at);
+      });
+    }
+    return influence;
+  }
+
+  private placeDraws(
+    kind: FamilyKind,
+    key: number,
+    toleranceM: number,
+    random: RandomStream,
+  ): Float64Array | null {
+    if (toleranceM === 0) return null;
+    const name = `${kind} ${key}`;
+    let draws = this.places.get(name);
+    if (!draws) {
+      draws = Float64Array.from({ length: this.drawCount }, () => random.rectangular());
+      this.places.set(name, draws);
+    }
+    return draws;
+  }
+
+  private keyOf(kind: FamilyKind, component: number): number {
+    return this.families.find((entry) => entry.kind === kind)?.keys[component] ?? -1;
   }
 }

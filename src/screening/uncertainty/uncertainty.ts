@@ -4,7 +4,8 @@ import type { CaseFactors } from "../load-cases";
 import type { Measured, MeasuredState } from "../measures/measure";
 import { standardUncertainty } from "./first-order";
 import { isResolved, nearBounds, nearItems } from "./linearity";
-import { monteCarloUncertainty } from "./monte-carlo";
+import { DRAWS, monteCarloUncertainty } from "./monte-carlo";
+import { NearItems } from "./near-items";
 import { randomStream } from "./random";
 
 export interface Uncertainty {
@@ -20,6 +21,8 @@ export type UncertaintyOf = (
   measured: Measured,
 ) => Uncertainty;
 
+/** Streams of places count down from here, those of everything else up from nought. */
+const PLACES_STREAM = -1;
 /** Coverage factor of first-order uncertainties. */
 const COVERAGE = 2;
 
@@ -29,6 +32,7 @@ const COVERAGE = 2;
  */
 export function uncertaintiesOf(inputHash: string, sensorIndex: number): UncertaintyOf {
   const seed = inputHash.replace("sha256:", "");
+  const anew = new Map<3 | 9, NearItems>();
   return (judging, factors, state, measured) => {
     const { plan, sensor } = judging.at;
     const near = judging.at.nearItems(() => nearItems(plan, sensor));
@@ -40,7 +44,14 @@ export function uncertaintiesOf(inputHash: string, sensorIndex: number): Uncerta
         method: "first-order",
       };
     }
-    const expanded = monteCarloUncertainty(judging, factors, measured, near, randomStream(seed, sensorIndex));
+    const { width } = judging.measure;
+    if (near.length > 0 && !anew.has(width)) {
+      const random = randomStream(seed, PLACES_STREAM - sensorIndex);
+      anew.set(width, new NearItems(plan, sensor, width, judging.at.familiesFor(width), near, DRAWS, random));
+    }
+    const redrawn = anew.get(width) ?? null;
+    const random = randomStream(seed, sensorIndex);
+    const expanded = monteCarloUncertainty(judging, factors, measured, near, redrawn, random);
     return { expanded, method: "monte-carlo" };
   };
 }
