@@ -21,6 +21,12 @@ export default ts.config(
   },
   { files: ["src/**"], rules: { "no-restricted-syntax": ["error", noProcessEnv] } },
   { files: ["src/server/env.ts"], rules: { "no-restricted-syntax": "off" } },
-  { files: ["scripts/**", "fakes/**", "tests/**", "src/server/entries/**", "src/screening/command.ts"], rules: { "no-console": "off" } },
-  { files: ["**/*.mjs"], languageOptions: { globals: { process: "readonly", console: "readonly", URL: "readonly" } } },
+  {
+    files: ["scripts/**", "fakes/**", "tests/**", "src/server/entries/**", "src/screening/command.ts"],
+    rules: { "no-console": "off" },
+  },
+  {
+    files: ["**/*.mjs"],
+    languageOptions: { globals: { process: "readonly", console: "readonly", URL: "readonly" } },
+  },
 );
