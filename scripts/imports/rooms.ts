@@ -27,7 +27,7 @@ const mayImport: Readonly<Record<string, (path: string) => boolean>> = {
   client: startsWith("domain/", "workers/protocol", "workers/browser"),
   components: startsWith("domain/", "sheet/", "client/", "styles/"),
   layouts: startsWith("domain/", "sheet/", "client/", "components/", "styles/"),
-  server: startsWith("domain/", "screening/", "workers/protocol", "workers/node"),
+  server: startsWith("domain/", "screening/", "workers/protocol", "workers/text-protocol", "workers/node"),
   pages: page,
   middleware: page,
   env: page,

@@ -4,11 +4,14 @@ import type { PlanDocument } from "~/domain/plan-document/plan-document";
 import type { ScreeningResult } from "~/domain/screening-result";
 import type { Job } from "./jobs";
 import { ScreeningFailedError, type FieldMap, type FieldMapRequest, type WorkerResponse } from "./protocol";
+import type { TextAnswer, TextJob } from "./text-protocol";
 
 export interface ScreeningPool {
   /** Rejects with ScreeningFailedError; on abort the thread is ended and an AbortError comes back. */
   screen(document: PlanDocument, signal?: AbortSignal): Promise<ScreeningResult>;
   map(document: PlanDocument, request: FieldMapRequest, signal?: AbortSignal): Promise<FieldMap>;
+  /** Has a document's text read and worked on in the thread. Rejects on abort only; the answer says what was refused. */
+  text(job: TextJob, signal?: AbortSignal): Promise<TextAnswer>;
   close(): Promise<void>;
 }
 
@@ -22,13 +25,13 @@ export function createScreeningPool(
   workerFile: URL | string,
   { maxThreads }: ScreeningPoolOptions = {},
 ): ScreeningPool {
-  const pool = new Piscina<Job, WorkerResponse>({
+  const pool = new Piscina<Job | TextJob, WorkerResponse | TextAnswer>({
     filename: typeof workerFile === "string" ? workerFile : fileURLToPath(workerFile),
     minThreads: 1,
     ...(maxThreads ? { maxThreads } : {}),
   });
   const run = async (job: Job, signal: AbortSignal | undefined): Promise<WorkerResponse> => {
-    const response = await pool.run(job, signal ? { signal } : {});
+    const response = (await pool.run(job, signal ? { signal } : {})) as WorkerResponse;
     if (response.type === "failed") throw new ScreeningFailedError(response.message, response.faults);
     return response;
   };
@@ -43,6 +46,7 @@ export function createScreeningPool(
       if (response.type !== "mapped") throw new ScreeningFailedError("the worker answered something else");
       return response.map;
     },
+    text: async (job, signal) => (await pool.run(job, signal ? { signal } : {})) as TextAnswer,
     close: () => pool.close(),
   };
 }

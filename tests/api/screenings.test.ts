@@ -97,25 +97,15 @@ describe("screening a plan", () => {
 
   it("refuses with its path what the engine does not compute, and stores nothing", async () => {
     const document = screenablePlan(plan.name);
-    await save({
-      ...document,
-      equipment: [
-        {
-          id: "e1",
-          name: "Spare reel",
-          kind: "coil",
-          turns: 12,
-          radiusM: 0.4,
-          lengthM: 0.1,
-          centre: [5, 2, 0.5],
-          axis: [0, 0, 1],
-          supply: { kind: "dc", currentA: 20 },
-        },
-      ],
-    });
+    const there: [number, number, number] = [0, 0, 2.8];
+    const circuits = document.circuits.map((circuit) => ({
+      ...circuit,
+      path: [there, [12, 0, 2.8] as typeof there, there],
+    }));
+    await save({ ...document, circuits });
     const refused = await screen();
     expect([refused.status, refused.body.error.code]).toEqual([422, "document.refused"]);
-    expect(refused.body.error.faults[0].path).toBe("equipment[0].kind");
+    expect(refused.body.error.faults[0].path).toBe("circuits[0].path");
     expect(await stored()).toEqual([]);
   });
 

@@ -33,6 +33,22 @@ export async function readBody(request: Request, maxBytes: number): Promise<Uint
   return body;
 }
 
+const mediaTypeOf = (request: Request): string | undefined =>
+  (request.headers.get("content-type") ?? "").split(";")[0]?.trim().toLowerCase();
+
+const readText = async (request: Request, maxBytes: number): Promise<string> =>
+  new TextDecoder().decode(await readBody(request, maxBytes));
+
+/**
+ * The text of a JSON body that somebody else will parse.
+ * @throws Refusal request.wrong-type, request.too-large
+ */
+export async function readJsonText(request: Request, maxBytes: number): Promise<string> {
+  if (mediaTypeOf(request) !== "application/json")
+    throw new Refusal("request.wrong-type", "Send the body as application/json.");
+  return readText(request, maxBytes);
+}
+
 /** A path such as `recipients[0].email`. */
 function faultPath(path: readonly PropertyKey[]): string {
   return path.reduce<string>(
@@ -58,11 +74,10 @@ export async function parseBody<T extends z.ZodType>(
   schema: T,
   options: { maxBytes: number; form: boolean },
 ): Promise<z.output<T>> {
-  const mediaType = (request.headers.get("content-type") ?? "").split(";")[0]?.trim().toLowerCase();
-  const isForm = options.form && mediaType === "application/x-www-form-urlencoded";
-  if (mediaType !== "application/json" && !isForm)
-    throw new Refusal("request.wrong-type", "Send the body as application/json.");
-  const text = new TextDecoder().decode(await readBody(request, options.maxBytes));
+  const isForm = options.form && mediaTypeOf(request) === "application/x-www-form-urlencoded";
+  const text = isForm
+    ? await readText(request, options.maxBytes)
+    : await readJsonText(request, options.maxBytes);
   let value: unknown;
   try {
     value = isForm ? Object.fromEntries(new URLSearchParams(text)) : JSON.parse(text);

@@ -7,23 +7,19 @@ import type { Scope } from "../auth/scope";
 import { errorReport } from "../error-report";
 import { log } from "../log";
 import { parseBody } from "./body";
+import type { EndpointDefinition } from "./endpoint-definition";
 import { refused } from "./respond";
 
 const jsonMaxBytes = 1_000_000;
 
 type PrincipalFor<A extends Action> = (typeof permissions)[A]["allow"] extends "anyone" ? Principal : Member;
 
-interface Definition<A extends Action, B extends z.ZodType, Q extends z.ZodType> {
-  /** What the caller must be allowed to do; the guard checks it before anything is read. */
+interface Definition<A extends Action, B extends z.ZodType, Q extends z.ZodType> extends EndpointDefinition {
   action: A;
-  /** One sentence for the published API description. */
-  summary: string;
   body?: B;
   query?: Q;
   /** Default 1 MB. */
   maxBytes?: number;
-  /** True where a page posts a plain HTML form here. */
-  form?: boolean;
 }
 
 export interface Call<A extends Action, B, Q> {
@@ -36,14 +32,7 @@ export interface Call<A extends Action, B, Q> {
   context: APIContext;
 }
 
-export type Endpoint = APIRoute & {
-  definition: {
-    action: Action;
-    summary: string;
-    body?: z.ZodType | undefined;
-    query?: z.ZodType | undefined;
-  };
-};
+export type Endpoint = APIRoute & { definition: EndpointDefinition };
 
 const nothing = z.undefined();
 
@@ -79,7 +68,7 @@ export function endpoint<
       return refused(asRefusal(error, context));
     }
   };
-  return Object.assign(route, { definition: { action, summary: definition.summary, body, query } });
+  return Object.assign(route, { definition });
 }
 
 /** The refusal that stands for `error`; one that nobody foresaw is logged and loses its text. */

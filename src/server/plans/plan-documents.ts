@@ -1,8 +1,10 @@
 import { z } from "zod";
+import { planDocumentJson } from "~/domain/answers/plan-document-json";
 import { type Fault, Refusal } from "~/domain/errors";
 import type { Member } from "~/domain/permissions";
 import { parsePlanDocument } from "~/domain/plan-document/parse";
 import type { PlanDocument } from "~/domain/plan-document/plan-document";
+import { MAX_DOCUMENT_BYTES } from "~/domain/plan-document/read";
 import { recordActivity } from "../activity/record";
 import { db, type Queryable } from "../db/client";
 import { findDrawing } from "../db/queries/drawings";
@@ -11,10 +13,10 @@ import { type PlanRow, renamePlan as renamePlanRow } from "../db/queries/plans";
 import { planNameInput, withFreePlanName } from "./plans";
 
 /** Largest body of a save. */
-export const documentMaxBytes = 20_000_000;
+export const documentMaxBytes = MAX_DOCUMENT_BYTES;
 
 /** The document is judged by its own schema, whose faults have paths that begin in the document. */
-export const saveInput = z.strictObject({ baseVersion: z.int().min(1), document: z.unknown() });
+export const saveInput = z.strictObject({ baseVersion: z.int().min(1), document: planDocumentJson });
 
 export interface WorkingCopy {
   version: number;

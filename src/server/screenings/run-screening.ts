@@ -1,8 +1,5 @@
 import { type Fault, Refusal } from "~/domain/errors";
-import type { PlanDocument } from "~/domain/plan-document/plan-document";
-import { resultText } from "~/domain/result-text";
-import type { ScreeningResult } from "~/domain/screening-result";
-import { ScreeningFailedError } from "~/workers/protocol";
+import type { ScreenedText, TextAnswer, TextJob } from "~/workers/text-protocol";
 import { screeningPool } from "./pool";
 
 /** Longest that a screening may take, waiting for a free worker included. */
@@ -16,23 +13,39 @@ export const refusedDocument = (faults: readonly Fault[]): Refusal =>
   );
 
 /**
- * Screens a valid document in the worker pool.
+ * Reads, judges and screens a document's text in the worker pool; the thread that asks only passes it on.
  * @param signal aborted when nobody waits for the answer any more
  * @param limitMs how long it may take
- * @throws Refusal document.refused with faults; screening.timed-out; service.unavailable once `signal` is aborted
+ * @throws Refusal document.refused with faults; request.malformed; screening.timed-out; service.unavailable once `signal` is aborted
  */
 export async function runScreening(
-  document: PlanDocument,
+  text: string,
   signal?: AbortSignal,
   limitMs = screeningLimitMs,
-): Promise<{ result: ScreeningResult; text: string }> {
+): Promise<ScreenedText> {
+  const answer = await inPool({ type: "screen-text", text }, signal, limitMs);
+  switch (answer.type) {
+    case "screened":
+      return answer.screened;
+    case "refused":
+      throw refusedDocument(answer.faults);
+    case "not-json":
+      throw new Refusal(
+        "request.malformed",
+        `The document is not valid JSON: ${answer.reason}. Check it and send it again.`,
+      );
+    case "failed":
+      throw new Error(`The screening failed: ${answer.message}`);
+  }
+}
+
+/** @throws Refusal screening.timed-out; service.unavailable once `signal` is aborted */
+async function inPool(job: TextJob, signal: AbortSignal | undefined, limitMs: number): Promise<TextAnswer> {
   const limit = AbortSignal.timeout(limitMs);
   try {
     const ending = signal === undefined ? limit : AbortSignal.any([signal, limit]);
-    const result = await screeningPool().screen(document, ending);
-    return { result, text: resultText(result) };
+    return await screeningPool().text(job, ending);
   } catch (error) {
-    if (error instanceof ScreeningFailedError && error.faults.length > 0) throw refusedDocument(error.faults);
     if (signal?.aborted)
       throw new Refusal(
         "service.unavailable",

@@ -1,9 +1,8 @@
 import { Refusal } from "~/domain/errors";
 import type { Member } from "~/domain/permissions";
-import { parsePlanDocument } from "~/domain/plan-document/parse";
 import { db } from "../db/client";
 import { leaveStatelessPlace, takeStatelessPlace } from "../db/queries/screenings";
-import { refusedDocument, runScreening, screeningLimitMs } from "./run-screening";
+import { runScreening, screeningLimitMs } from "./run-screening";
 
 /** A place that was not given back is free again a little after the longest screening would have ended. */
 const placeMs = screeningLimitMs + 15_000;
@@ -11,9 +10,9 @@ const placeMs = screeningLimitMs + 15_000;
 /**
  * Screens a document that is kept nowhere, one at a time for each person over all processes.
  * @returns the result's text, the same bytes as a stored screening of the document
- * @throws Refusal document.refused with faults; screening.busy; screening.timed-out
+ * @throws Refusal document.refused with faults; request.malformed; screening.busy; screening.timed-out
  */
-export async function screenDocument(member: Member, json: unknown, signal?: AbortSignal): Promise<string> {
+export async function screenDocument(member: Member, text: string, signal?: AbortSignal): Promise<string> {
   const runId = crypto.randomUUID();
   const now = new Date();
   const place = { userId: member.userId, runId, now, expiresAt: new Date(now.getTime() + placeMs) };
@@ -24,9 +23,7 @@ export async function screenDocument(member: Member, json: unknown, signal?: Abo
       { detail: { retryAfterS: 5 } },
     );
   try {
-    const parsed = parsePlanDocument(json);
-    if (!parsed.ok) throw refusedDocument(parsed.faults);
-    return (await runScreening(parsed.document, signal)).text;
+    return (await runScreening(text, signal)).text;
   } finally {
     await leaveStatelessPlace(db(), member.userId, runId);
   }

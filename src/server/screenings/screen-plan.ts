@@ -1,8 +1,8 @@
 import { z } from "zod";
 import { Refusal } from "~/domain/errors";
 import type { Member } from "~/domain/permissions";
-import type { PlanDocument } from "~/domain/plan-document/plan-document";
-import type { ScreeningResult, Verdict } from "~/domain/screening-result";
+import type { Verdict } from "~/domain/screening-result";
+import type { ScreenedText } from "~/workers/text-protocol";
 import { recordActivity } from "../activity/record";
 import { db } from "../db/client";
 import { type FindingRow, insertFindings } from "../db/queries/findings";
@@ -40,9 +40,7 @@ export async function screenPlan(
       `The plan is at version ${String(saved.version)} now. Load it, look at what has changed, and screen it again.`,
       { detail: { version: saved.version } },
     );
-  // Valid since it was saved; the engine says what it does not compute.
-  const document = JSON.parse(saved.document) as PlanDocument;
-  const { result, text } = await runScreening(document, signal);
+  const screened = await runScreening(saved.document, signal);
   const id = crypto.randomUUID();
   await db().transaction(async (tx) => {
     await insertScreening(tx, {
@@ -50,43 +48,26 @@ export async function screenPlan(
       organisationId,
       planId: plan.id,
       documentVersion: version,
-      inputHash: result.inputHash,
-      engineVersion: result.engineVersion,
-      verdict: result.verdict,
+      inputHash: screened.inputHash,
+      engineVersion: screened.engineVersion,
+      verdict: screened.verdict,
       document: saved.document,
-      result: text,
+      result: screened.text,
       screenedBy: member.userId,
       screenedAt: new Date(),
     });
-    await insertFindings(tx, findingRows(id, document, result));
+    await insertFindings(tx, findingRows(id, screened));
     await recordActivity(tx, {
       organisationId,
       actorId: member.userId,
       event: "plan.screened",
       subjectKind: "screening",
       subjectId: id,
-      detail: { planId: plan.id, version, verdict: result.verdict },
+      detail: { planId: plan.id, version, verdict: screened.verdict },
     });
   });
-  return { id, url: `/plans/${plan.id}/screenings/${id}`, verdict: result.verdict };
+  return { id, url: `/plans/${plan.id}/screenings/${id}`, verdict: screened.verdict };
 }
 
-function findingRows(screeningId: string, document: PlanDocument, result: ScreeningResult): FindingRow[] {
-  const names = new Map(document.sensors.map(({ id, name }) => [id, name]));
-  return result.sensors.flatMap((sensor) =>
-    sensor.findings.map((finding) => ({
-      screeningId,
-      sensorId: sensor.id,
-      limitId: finding.limitId,
-      sensorName: names.get(sensor.id) ?? sensor.id,
-      kind: finding.kind,
-      limitValue: finding.limit,
-      value: finding.value,
-      expandedUncertainty: finding.expandedUncertainty,
-      unit: finding.unit,
-      budgetUsed: finding.budgetUsed,
-      verdict: finding.verdict,
-      loadCaseId: finding.loadCaseId,
-    })),
-  );
-}
+const findingRows = (screeningId: string, { findings }: ScreenedText): FindingRow[] =>
+  findings.map(({ limit, ...finding }) => ({ ...finding, screeningId, limitValue: limit }));

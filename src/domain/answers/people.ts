@@ -1,0 +1,8 @@
+import * as z from "zod";
+import { roles } from "../roles";
+
+export const rolesAnswer = z.object({ roles: z.array(z.enum(roles)) });
+
+export const mailAcceptedAnswer = z.object({ accepted: z.literal(true) });
+
+export const healthAnswer = z.object({ status: z.literal("ok") });
