@@ -2,6 +2,7 @@ import { createConnection } from "mysql2/promise";
 import { afterAll, beforeAll, beforeEach, describe, expect, it } from "vitest";
 import { db } from "../../src/server/db/client";
 import { listActivity } from "../../src/server/db/queries/activity";
+import { noticeView } from "../../src/server/notices/notices";
 import { as } from "../fixtures/api-client";
 import { newMember, newOrganisation, type SignedInMember } from "../fixtures/organisation";
 import { newAddress, newScreenedPlan, type ScreenedPlan } from "../fixtures/screenings";
@@ -35,6 +36,7 @@ const compose = (more: object = {}, member = planner) =>
   });
 const deliveriesOf = async (id: string) =>
   (await as(app, planner)("get", `${notices()}/${id}/deliveries`)).body.deliveries;
+const draftTag = async (id: string) => (await noticeView(planner, id)).draftTag;
 const issue = (id: string, member = planner) => as(app, member)("post", `${notices()}/${id}/issue`);
 
 describe("composing", () => {
@@ -93,6 +95,40 @@ describe("composing", () => {
   });
 });
 
+describe("a draft that two planners have open", () => {
+  it("takes the first save, and refuses the second with what the first left, until it is meant", async () => {
+    const { body } = await compose();
+    const at = `${notices()}/${String(body.id)}`;
+    const change = (draft: object) => as(app, planner)("patch", at).send(draft);
+    const opened = await draftTag(body.id);
+    const email = newAddress();
+    const first = { coveringText: "Wear a helmet.", recipients: [{ name: "Ilka Thorsen", email }] };
+    const saved = await change({ draftTag: opened, ...first });
+    expect([saved.status, saved.body]).toEqual([200, { id: body.id, draftTag: await draftTag(body.id) }]);
+    const late = await change({ draftTag: opened, coveringText: "No helmet." });
+    expect([late.status, late.body.error.code]).toEqual([409, "state.conflict"]);
+    expect(late.body.error.detail).toEqual({ draftTag: saved.body.draftTag, ...first });
+    // A save whose answer was lost is sent again, on the old tag.
+    expect((await change({ draftTag: opened, ...first })).status).toBe(200);
+    const meant = await change({ draftTag: late.body.error.detail.draftTag, coveringText: "No helmet." });
+    expect(meant.status).toBe(200);
+    expect(await noticeView(planner, body.id)).toMatchObject({
+      notice: { coveringText: "No helmet." },
+      recipients: [{ email }],
+    });
+    expect((await change({ coveringText: "On nothing." })).status).toBe(422);
+  });
+
+  it("lets one of two simultaneous saves through", async () => {
+    const { body } = await compose();
+    const opened = await draftTag(body.id);
+    const save = (coveringText: string) =>
+      as(app, planner)("patch", `${notices()}/${String(body.id)}`).send({ draftTag: opened, coveringText });
+    const answers = await Promise.all([save("One."), save("Two.")]);
+    expect(answers.map(({ status }) => status).sort()).toEqual([200, 409]);
+  });
+});
+
 describe("the preview", () => {
   it("shows what will be sent, and may do nothing but be shown in a page of this application", async () => {
     const { body } = await compose({ coveringText: "<script>alert(1)</script>\nBring the long ladder." });
@@ -117,7 +153,10 @@ describe("the preview", () => {
   it("follows the draft, and stays as it was once the notice is issued", async () => {
     const { body } = await compose();
     const at = `${notices()}/${String(body.id)}`;
-    const changed = await as(app, planner)("patch", at).send({ coveringText: "Wear a helmet." });
+    const changed = await as(app, planner)("patch", at).send({
+      draftTag: await draftTag(body.id),
+      coveringText: "Wear a helmet.",
+    });
     expect(changed.status).toBe(200);
     const preview = async () => (await as(app, planner)("get", `${at}/preview.txt`)).text;
     const before = await preview();
@@ -125,7 +164,8 @@ describe("the preview", () => {
     await issue(body.id);
     await as(app, planner)("patch", `/api/sites/${screened.plan.siteId}`).send({ name: "Another name" });
     expect(await preview()).toBe(before);
-    expect((await as(app, planner)("patch", at).send({ coveringText: "Later." })).status).toBe(409);
+    const later = { draftTag: changed.body.draftTag, coveringText: "Later." };
+    expect((await as(app, planner)("patch", at).send(later)).status).toBe(409);
   });
 });
 

@@ -4,14 +4,19 @@ import { ApiRefusal, callApi } from "~/client/api";
 import { Button } from "~/components/ui/Button";
 import { Dialog } from "~/components/ui/Dialog";
 import { describedBy, FieldFrame } from "~/components/ui/Field";
+import { draftChangedAnswer } from "~/domain/answers/notices";
 import { coveringTextMaxLength } from "~/domain/notice";
 import { AddresseeList } from "./AddresseeList";
+import { DraftConflict } from "./DraftConflict";
+import { conflictOf, type TheirDraft } from "./draft-conflict";
 import { NoticePreview } from "./NoticePreview";
 import { type Addressee, addresseesOf, chosenRecipients } from "./recipients";
 
 interface Props {
   /** Address of the notice in the API. */
   api: string;
+  /** Of the draft as the page was given it. */
+  draftTag: string;
   coveringText: string;
   recipients: readonly { name: string; email: string }[];
   contacts: readonly { name: string; email: string; duty: string }[];
@@ -22,7 +27,9 @@ interface Props {
 const anything = z.unknown();
 
 /** Composes a draft: whom it goes to and what the planner writes above the positions; then preview and issue. */
-export function NoticeComposer({ api, coveringText, recipients, contacts, siteUrl }: Props) {
+export function NoticeComposer({ api, draftTag, coveringText, recipients, contacts, siteUrl }: Props) {
+  const [base, setBase] = useState(draftTag);
+  const [theirs, setTheirs] = useState<TheirDraft | null>(null);
   const [text, setText] = useState(coveringText);
   const [addressees, setAddressees] = useState<Addressee[]>(() => addresseesOf(contacts, recipients));
   const [faults, setFaults] = useState<ReadonlyMap<string, string>>(new Map());
@@ -53,6 +60,9 @@ export function NoticeComposer({ api, coveringText, recipients, contacts, siteUr
       await work();
     } catch (error) {
       setAsking(false);
+      const conflict = conflictOf(error);
+      setTheirs(conflict);
+      if (conflict !== null) return;
       if (error instanceof ApiRefusal)
         setFaults(new Map(error.faults.map((fault) => [fault.path, fault.message])));
       setMessage({ text: refusalText(error), bad: true });
@@ -61,10 +71,25 @@ export function NoticeComposer({ api, coveringText, recipients, contacts, siteUr
     }
   }
 
-  const save = async () => {
-    await callApi(api, anything, { method: "PATCH", body: { coveringText: text, recipients: chosen } });
+  const save = async (draftTag = base) => {
+    const body = { draftTag, coveringText: text, recipients: chosen };
+    const saved = await callApi(api, draftChangedAnswer, { method: "PATCH", body });
+    setBase(saved.draftTag);
+    setTheirs(null);
     setDirty(false);
     setSavedCount((count) => count + 1);
+  };
+  const saveDraft = (draftTag?: string) =>
+    attempt(async () => {
+      await save(draftTag);
+      setMessage({ text: "The draft is saved.", bad: false });
+    });
+  const takeTheirs = (draft: TheirDraft) => {
+    setBase(draft.draftTag);
+    setText(draft.coveringText);
+    setAddressees(addresseesOf(contacts, draft.recipients));
+    setTheirs(null);
+    setDirty(false);
   };
   const issue = async () => {
     await save();
@@ -107,15 +132,16 @@ export function NoticeComposer({ api, coveringText, recipients, contacts, siteUr
           <p className={`message ${message.bad ? "message-over" : "message-within"}`}>{message.text}</p>
         )}
       </div>
+      {theirs !== null && (
+        <DraftConflict
+          theirs={theirs}
+          busy={busy}
+          onKeepMine={() => void saveDraft(theirs.draftTag)}
+          onTakeTheirs={() => takeTheirs(theirs)}
+        />
+      )}
       <div className="flex flex-wrap gap-3">
-        <Button
-          disabled={busy}
-          onClick={() =>
-            void attempt(async () =>
-              save().then(() => setMessage({ text: "The draft is saved.", bad: false })),
-            )
-          }
-        >
+        <Button disabled={busy} onClick={() => void saveDraft()}>
           Save and preview
         </Button>
         <Button kind="primary" disabled={busy || chosen.length === 0} onClick={() => setAsking(true)}>

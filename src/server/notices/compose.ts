@@ -7,6 +7,7 @@ import { db, type Queryable } from "../db/client";
 import {
   insertNotice,
   listNotices,
+  listRecipients,
   lockNotice,
   nextNoticeVersion,
   type NoticeRow,
@@ -15,6 +16,7 @@ import {
 } from "../db/queries/notices";
 import type { PlanRow } from "../db/queries/plans";
 import { lockScreening } from "../db/queries/screenings";
+import { draftTagOf } from "./draft-tag";
 
 export const newNoticeInput = z.strictObject({
   screeningId: z.uuid(),
@@ -23,6 +25,8 @@ export const newNoticeInput = z.strictObject({
 });
 
 export const noticeChangeInput = z.strictObject({
+  /** Of the draft as the planner has it before them. */
+  draftTag: z.string().max(64),
   coveringText: coveringTextSchema.optional(),
   recipients: recipientsSchema.optional(),
 });
@@ -79,17 +83,43 @@ export async function composeNotice(
   });
 }
 
-/** Changes a draft. @throws Refusal state.conflict once the notice has been issued */
+/**
+ * Changes a draft that is still as it was when the planner opened it.
+ * @returns the tag of what it says now
+ * @throws Refusal state.conflict once the notice has been issued, or, with the draft as it is now in its detail, once
+ * somebody else has changed it
+ */
 export async function changeNotice(
   notice: NoticeRow,
-  { coveringText, recipients }: { coveringText?: string | undefined; recipients?: Recipient[] | undefined },
-): Promise<void> {
-  await db().transaction(async (tx) => {
-    await lockDraft(tx, notice);
-    if (coveringText !== undefined)
-      await updateNotice(tx, notice.organisationId, notice.id, { coveringText });
-    if (recipients !== undefined) await replaceRecipients(tx, notice.id, recipients);
+  { draftTag, ...change }: z.output<typeof noticeChangeInput>,
+): Promise<{ draftTag: string }> {
+  return db().transaction(async (tx) => {
+    const draft = await lockDraft(tx, notice);
+    const recipients = await recipientsOf(tx, notice);
+    const after = {
+      coveringText: change.coveringText ?? draft.coveringText,
+      recipients: change.recipients ?? recipients,
+    };
+    const nextTag = draftTagOf(after.coveringText, after.recipients);
+    const presentTag = draftTagOf(draft.coveringText, recipients);
+    // A save whose answer was lost may be repeated.
+    if (presentTag === nextTag) return { draftTag: nextTag };
+    if (presentTag !== draftTag)
+      throw new Refusal(
+        "state.conflict",
+        "Somebody else has changed this draft since you opened it. What you typed is still here: compare, and choose what stands.",
+        { detail: { draftTag: presentTag, coveringText: draft.coveringText, recipients } },
+      );
+    if (change.coveringText !== undefined)
+      await updateNotice(tx, notice.organisationId, notice.id, { coveringText: change.coveringText });
+    if (change.recipients !== undefined) await replaceRecipients(tx, notice.id, change.recipients);
+    return { draftTag: nextTag };
   });
+}
+
+async function recipientsOf(tx: Queryable, notice: NoticeRow): Promise<Recipient[]> {
+  const rows = await listRecipients(tx, notice.organisationId, notice.id);
+  return rows.map(({ name, email }) => ({ name, email }));
 }
 
 /** The draft as it now is, held until the transaction ends. @throws Refusal state.conflict */

@@ -6,6 +6,7 @@ import { findNoticeById, listRecipients } from "../db/queries/notices";
 import { findPlan } from "../db/queries/plans";
 import { findScreeningHeading } from "../db/queries/screenings";
 import { findSite, listContacts } from "../db/queries/sites";
+import { draftTagOf } from "./draft-tag";
 
 const notThere = () => new Refusal("not-found", "This notice is no longer there. Go back to your Desk.");
 
@@ -19,12 +20,14 @@ export async function noticeView(member: Member, noticeId: string) {
   if (notice === undefined || found === undefined || plan === undefined || site === undefined)
     throw notThere();
   const { currentVersion, ...screening } = found;
+  const recipients = await listRecipients(db(), organisationId, noticeId);
   return {
     notice,
     screening: { ...screening, isCurrent: currentVersion === screening.documentVersion },
     plan,
     site,
-    recipients: await listRecipients(db(), organisationId, noticeId),
+    recipients,
+    draftTag: draftTagOf(notice.coveringText, recipients),
     contacts: await listContacts(db(), organisationId, site.id),
     deliveries: await listNoticeDeliveries(db(), organisationId, noticeId),
   };
