@@ -1,5 +1,6 @@
-import { z } from "zod";
-import { statusByErrorCode, type ErrorCode, type Fault } from "~/domain/errors";
+import type { z } from "zod";
+import { errorAnswer } from "~/domain/answers/common";
+import type { ErrorCode, Fault } from "~/domain/errors";
 
 /** The server said no; `message` is meant for the person. */
 export class ApiRefusal extends Error {
@@ -31,15 +32,6 @@ export class NoConnection extends Error {
   }
 }
 
-const errorBodySchema = z.object({
-  error: z.object({
-    code: z.enum(Object.keys(statusByErrorCode) as [ErrorCode, ...ErrorCode[]]),
-    message: z.string(),
-    faults: z.array(z.object({ path: z.string(), message: z.string() })).optional(),
-    detail: z.record(z.string(), z.unknown()).optional(),
-  }),
-});
-
 /** Turns the body of a refused call into what is thrown for it. */
 export function refusalOf(status: number, body: string): ApiRefusal | NoConnection {
   let json: unknown;
@@ -48,7 +40,7 @@ export function refusalOf(status: number, body: string): ApiRefusal | NoConnecti
   } catch (malformed) {
     return new NoConnection(malformed);
   }
-  const parsed = errorBodySchema.safeParse(json);
+  const parsed = errorAnswer.safeParse(json);
   if (!parsed.success) return new NoConnection(parsed.error);
   const { code, message, faults, detail } = parsed.data.error;
   return new ApiRefusal(code, status, message, {

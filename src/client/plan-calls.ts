@@ -1,7 +1,8 @@
 import { z } from "zod";
+import { savedAnswer, workingCopyAnswer } from "~/domain/answers/plans";
+import { screenedAnswer } from "~/domain/answers/screenings";
 import { parsePlanDocument } from "~/domain/plan-document/parse";
 import type { PlanDocument } from "~/domain/plan-document/plan-document";
-import { verdictSchema } from "~/domain/screening-result";
 import { ApiRefusal, callApi } from "./api";
 import type { PutOutcome, TheirSave } from "./autosave";
 
@@ -20,12 +21,7 @@ const documentSchema = z.unknown().transform((json, context): PlanDocument => {
   return z.NEVER;
 });
 
-const savedPlanSchema = z.object({
-  version: z.int(),
-  document: documentSchema,
-  savedAt: z.string(),
-  savedByName: z.string().nullable(),
-});
+const savedPlanSchema = workingCopyAnswer.extend({ document: documentSchema });
 
 export type SavedPlan = TheirSave<PlanDocument>;
 
@@ -45,14 +41,10 @@ export async function putPlan(
   document: PlanDocument,
 ): Promise<PutOutcome<PlanDocument>> {
   try {
-    const answer = await callApi(
-      `${plansPath(planId)}/document`,
-      z.object({ version: z.int(), savedAt: z.string() }),
-      {
-        method: "PUT",
-        body: { baseVersion, document },
-      },
-    );
+    const answer = await callApi(`${plansPath(planId)}/document`, savedAnswer, {
+      method: "PUT",
+      body: { baseVersion, document },
+    });
     return { kind: "saved", ...answer };
   } catch (refused) {
     if (!(refused instanceof ApiRefusal) || refused.code !== "document.conflict") throw refused;
@@ -61,11 +53,9 @@ export async function putPlan(
   }
 }
 
-const screeningSchema = z.object({ id: z.string(), url: z.string(), verdict: verdictSchema });
-
 /** Screens the saved working copy at `version`, stores the result and tells its page. */
-export const postScreening = (planId: string, version: number): Promise<z.output<typeof screeningSchema>> =>
-  callApi(`${plansPath(planId)}/screenings`, screeningSchema, { method: "POST", body: { version } });
+export const postScreening = (planId: string, version: number): Promise<z.output<typeof screenedAnswer>> =>
+  callApi(`${plansPath(planId)}/screenings`, screenedAnswer, { method: "POST", body: { version } });
 
 export const drawingUrl = (planId: string, drawingId: string): string =>
   `${plansPath(planId)}/drawings/${encodeURIComponent(drawingId)}`;

@@ -1,9 +1,8 @@
-import { z } from "zod";
+import type { z } from "zod";
+import { drawingAnswer } from "~/domain/answers/plans";
 import { NoConnection, refusalOf } from "./api";
 
-const drawingSchema = z.object({ id: z.string(), widthPx: z.number(), heightPx: z.number() });
-
-export type UploadedDrawing = z.output<typeof drawingSchema>;
+export type UploadedDrawing = z.output<typeof drawingAnswer>;
 
 /** The person cancelled; nothing was kept. */
 export class UploadCancelled extends Error {
@@ -37,7 +36,7 @@ export function uploadDrawing(
         return;
       }
       try {
-        resolve(drawingSchema.parse(JSON.parse(request.responseText)));
+        resolve(drawingAnswer.parse(JSON.parse(request.responseText)));
       } catch (malformed) {
         reject(new NoConnection(malformed));
       }

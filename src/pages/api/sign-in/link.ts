@@ -1,3 +1,4 @@
+import { mailAcceptedAnswer } from "~/domain/answers/people";
 import { z } from "zod";
 import { isForPage, orSignInPage } from "~/server/auth/answers";
 import { clientNetwork } from "~/server/auth/client-address";
@@ -12,6 +13,8 @@ export const POST = endpoint(
     summary: "Has a one-time sign-in link mailed; the answer does not tell whether the address is known.",
     body: z.object({ email: z.string().max(1000) }),
     form: true,
+    responses: { 202: mailAcceptedAnswer, 303: "empty" },
+    refusals: ["rate.exceeded"],
   },
   ({ body, request, context }) =>
     orSignInPage(request, async () => {

@@ -9,6 +9,7 @@ export const POST = endpoint(
     summary: "Signs somebody of several organisations in to the one that they choose.",
     body: z.object({ organisationId: z.string() }),
     form: true,
+    responses: { 303: "empty" },
   },
   async ({ body, context }) => goOnTo(await chooseOrganisation(context.cookies, body.organisationId)),
 );

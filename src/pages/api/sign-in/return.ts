@@ -10,6 +10,7 @@ export const GET = endpoint(
     action: "session.start",
     summary: "Where the sign-in provider sends the browser back to.",
     query: z.object({ code: answer, state: answer, iss: answer, error: answer }),
+    responses: { 303: "empty" },
   },
   ({ query, request, context }) =>
     orSignInPage(request, async () => goOnTo(await finishSignIn(context.cookies, query))),

@@ -9,7 +9,13 @@ export const GET = endpoint(
   {
     action: "session.start",
     summary: "Sends the browser to the sign-in provider.",
-    query: z.object({ returnTo: z.string().optional(), organisation: z.string().max(64).optional() }),
+    query: z.object({
+      returnTo: z.string().optional(),
+      organisation: z.string().max(64).optional(),
+      invitation: z.string().max(1000).optional(),
+    }),
+    responses: { 303: "empty" },
+    refusals: ["rate.exceeded"],
   },
   ({ query, request, context }) =>
     orSignInPage(request, async () => {

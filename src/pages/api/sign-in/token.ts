@@ -11,6 +11,8 @@ export const POST = endpoint(
     summary: "Uses up a mailed sign-in link.",
     body: z.object({ token: z.string().max(1000), returnTo: z.string().optional() }),
     form: true,
+    responses: { 303: "empty" },
+    refusals: ["rate.exceeded"],
   },
   ({ body, request, context }) =>
     orSignInPage(request, async () => {

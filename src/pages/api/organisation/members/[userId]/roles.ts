@@ -1,3 +1,4 @@
+import { rolesAnswer } from "~/domain/answers/people";
 import { named } from "~/server/auth/scope";
 import { giveSessionCookie } from "~/server/auth/session";
 import { endpoint } from "~/server/http/endpoint";
@@ -9,6 +10,8 @@ export const PUT = endpoint(
     action: "member.change-roles",
     summary: "Gives a member exactly these roles and ends their sessions.",
     body: rolesInput,
+    responses: { 200: rolesAnswer },
+    refusals: ["state.conflict"],
   },
   async ({ principal, scope, body, context }) => {
     const { locals, cookies } = context;

@@ -1,3 +1,5 @@
+import { mediaTypes } from "~/server/drawings/image-kind";
+import { drawingAnswer } from "~/domain/answers/plans";
 import { named } from "~/server/auth/scope";
 import { storeDrawing } from "~/server/drawings/drawings";
 import { uploadedFileName } from "~/server/drawings/file-name";
@@ -10,6 +12,9 @@ export const POST = endpoint(
   {
     action: "drawing.upload",
     summary: "Stores a floor plan; the body is the bytes of a PNG, JPEG or WebP image.",
+    ownBody: { mediaTypes: Object.values(mediaTypes) },
+    responses: { 201: drawingAnswer },
+    refusals: ["request.too-large", "drawing.refused", "service.unavailable"],
   },
   async ({ principal, scope, request }) => {
     const plan = named(scope, "plan");

@@ -4,7 +4,11 @@ import { noContent } from "~/server/http/respond";
 import { removeContact } from "~/server/sites/contacts";
 
 export const DELETE = endpoint(
-  { action: "site.edit", summary: "Takes somebody off a site's people to notify." },
+  {
+    action: "site.edit",
+    summary: "Takes somebody off a site's people to notify.",
+    responses: { 204: "empty" },
+  },
   async ({ principal, scope }) => {
     await removeContact(principal, named(scope, "contact"));
     return noContent();

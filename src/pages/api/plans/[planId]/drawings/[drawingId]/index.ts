@@ -1,8 +1,14 @@
+import { mediaTypes } from "~/server/drawings/image-kind";
 import { named } from "~/server/auth/scope";
 import { serveDrawing } from "~/server/drawings/serve";
 import { endpoint } from "~/server/http/endpoint";
 
 export const GET = endpoint(
-  { action: "drawing.read", summary: "The image of a drawing." },
+  {
+    action: "drawing.read",
+    summary: "The image of a drawing.",
+    responses: { 200: { mediaTypes: Object.values(mediaTypes) }, 304: "empty" },
+    refusals: ["service.unavailable"],
+  },
   async ({ scope, request }) => serveDrawing(request, named(scope, "drawing"), "image"),
 );

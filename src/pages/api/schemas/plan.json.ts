@@ -1,0 +1,13 @@
+import { jsonSchemaAnswer } from "~/domain/answers/schemas";
+import { planSchema } from "~/server/api-description/json-schemas";
+import { endpoint } from "~/server/http/endpoint";
+import { json } from "~/server/http/respond";
+
+export const GET = endpoint(
+  {
+    action: "schema.read",
+    summary: "The JSON Schema of the plan document.",
+    responses: { 200: jsonSchemaAnswer },
+  },
+  () => json(planSchema()),
+);
