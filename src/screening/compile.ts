@@ -10,6 +10,8 @@ import type { Drive, SourceItem } from "./source-item";
 import { sectionFrames } from "~/field/section-frames";
 
 export const MAX_SEGMENTS = 200_000;
+/** Most contributions that one result lists: beyond it neither JSON nor memory holds it. */
+export const MAX_RESULT_ENTRIES = 2_000_000;
 
 /** One drive of one item with its place in the flat tables. */
 export interface Component {
@@ -76,10 +78,17 @@ export function compilePlan(document: ResolvedPlanDocument): CompiledPlan {
   document.equipment.forEach((equipment, index) => {
     const item = compileEquipment(equipment, `equipment[${index}]`);
     if (item) items.push(item);
+    // A turn costs about as much as a segment.
+    if (equipment.kind === "coil") segments += equipment.turns;
   });
   if (segments > MAX_SEGMENTS) {
-    const message = `${segments} straight conductor segments; at most ${MAX_SEGMENTS} are screened at once. Split the plan by area`;
+    const message = `${segments} conductor segments and turns; at most ${MAX_SEGMENTS} are screened at once. Split the plan by area`;
     faults.push({ path: "circuits", message });
+  }
+  const entries = items.length * document.sensors.reduce((sum, { limits }) => sum + limits.length, 0);
+  if (entries > MAX_RESULT_ENTRIES) {
+    const message = `${items.length} sources on ${document.sensors.length} sensors would make a result of ${entries} contributions; at most ${MAX_RESULT_ENTRIES} are listed. Split the plan by area`;
+    faults.push({ path: "sensors", message });
   }
   if (faults.length > 0) throw new RefusedDocumentError(faults);
   const bounds = boundItems(document.equipment);

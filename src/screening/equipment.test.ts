@@ -105,6 +105,16 @@ describe("equipment", () => {
     expect(at(1)).toBe(180);
   });
 
+  it("swings a magnet of unknown direction by the change of its factor", () => {
+    const loadCases = [
+      { id: "a", name: "A", factors: { t2: 1 } },
+      { id: "b", name: "B", factors: { t2: -1 } },
+    ];
+    const limits: LimitInput[] = [{ kind: "swing", limitT: 1 }];
+    expect(valueOf([dipole()], [3, 0, 0], limits, { loadCases })).toBeCloseTo(2e-6, 15);
+    expect(valueOf([dipole()], [3, 0, 0], limits)).toBeCloseTo(1e-6, 15);
+  });
+
   it("lists the bound's own part and sums contributions to 1", () => {
     const circuits: PlanDocumentInput["circuits"] = [
       {

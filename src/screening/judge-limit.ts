@@ -3,7 +3,7 @@ import { VERDICTS, type Finding } from "~/domain/screening-result";
 import { contributionsOf } from "./contributions";
 import { fieldReport } from "./field-report";
 import type { LimitJudging } from "./judging";
-import { caseFactors, swingFactors, type CaseFactors } from "./load-cases";
+import { distinctCases, largestSwing, type CaseFactors } from "./load-cases";
 import type { Measured, MeasuredState } from "./measures/measure";
 import type { Uncertainty, UncertaintyOf } from "./uncertainty/uncertainty";
 import { cappedVerdict, guardedVerdict } from "./verdict";
@@ -49,25 +49,11 @@ export function judgeLimit(judging: LimitJudging, capped: boolean, uncertaintyOf
  */
 function casesOf(judging: LimitJudging): CaseFactors[] {
   const { plan } = judging.at;
-  if (judging.limit.kind !== "swing") return distinctCases(judging, caseFactors(plan));
-  const [first, ...others] = swingFactors(plan).map((factors) => ({
-    factors,
-    value: judging.measureIn(factors).measured.value,
-  }));
-  if (!first) return [];
-  return [others.reduce((best, next) => (next.value > best.value ? next : best), first).factors];
-}
-
-function distinctCases(judging: LimitJudging, cases: CaseFactors[]): CaseFactors[] {
-  const { plan } = judging.at;
-  const items = [...new Set(plan.components.flatMap(({ item }, c) => (judging.included[c] ? [item] : [])))];
-  const seen = new Set<string>();
-  return cases.filter((factors) => {
-    const key = [...items.map((item) => factors.items[item]), ...factors.bounds].join();
-    if (seen.has(key)) return false;
-    seen.add(key);
-    return true;
-  });
+  if (judging.limit.kind !== "swing") return distinctCases(plan, judging.measure.includes);
+  const groupsIn = (factors: CaseFactors) => judging.stateIn(factors).groups;
+  const valueOf = (groups: Float64Array, factors: CaseFactors) =>
+    judging.measure.value({ groups, bounds: judging.boundsIn(factors), earth: null });
+  return [largestSwing(plan, groupsIn, valueOf)];
 }
 
 function worse(one: Candidate, other: Candidate): Candidate {

@@ -84,29 +84,26 @@ export class LimitJudging {
     return this.measure.width === 3 ? this.at.field.phasors : this.at.field.gradients;
   }
 
-  stateIn({ items, bounds }: CaseFactors): MeasuredState {
+  stateIn(factors: CaseFactors): MeasuredState {
     const { plan, earth } = this.at;
     const groups = new Float64Array(this.stride * plan.frequencies.groups.length);
-    sumGroups(plan, this.phasors, this.stride, items, this.included, groups);
-    return this.withBackground(groups, bounds, earth);
-  }
-
-  measureIn(factors: CaseFactors): { state: MeasuredState; measured: Measured } {
-    const state = this.stateIn(factors);
-    return { state, measured: this.measure.measure(state) };
-  }
-
-  private withBackground(
-    groups: Float64Array,
-    factors: Float64Array,
-    earth: PlanEarth | null,
-  ): MeasuredState {
+    sumGroups(plan, this.phasors, this.stride, factors.items, this.included, groups);
     this.background.staticT.forEach((component, i) => (groups[i] = (groups[i] as number) + component));
+    return { groups, bounds: this.boundsIn(factors), earth };
+  }
+
+  /** Bounds per frequency class, the background's magnitudes among them. */
+  boundsIn({ bounds: factors }: CaseFactors): Float64Array {
     const bounds = Float64Array.from(this.background.bounds);
     this.itemBounds.forEach((bound, i) => {
       const classIndex = this.boundClasses[i] as number;
       bounds[classIndex] = (bounds[classIndex] as number) + bound * (factors[i] as number);
     });
-    return { groups, bounds, earth };
+    return bounds;
+  }
+
+  measureIn(factors: CaseFactors): { state: MeasuredState; measured: Measured } {
+    const state = this.stateIn(factors);
+    return { state, measured: this.measure.measure(state) };
   }
 }

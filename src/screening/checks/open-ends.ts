@@ -1,6 +1,6 @@
 import type { OpenEnd } from "~/domain/screening-result";
 import { distance, type Vector } from "~/field/vector";
-import type { CompiledPlan } from "../compile";
+import type { CompiledPlan, Component } from "../compile";
 import { caseFactors, type CaseFactors } from "../load-cases";
 
 /** Path ends nearer to each other than this meet, metres. */
@@ -21,10 +21,12 @@ interface End {
  */
 export function openEnds(plan: CompiledPlan): OpenEnd[] {
   const cases = caseFactors(plan);
+  const byItem = plan.items.map((): Component[] => []);
+  for (const component of plan.components) byItem[component.item]?.push(component);
   return meetings(plan).flatMap((ends) => {
     const [first] = ends;
     if (!first) return [];
-    const currentA = Math.max(...cases.map((factors) => imbalanceA(plan, ends, factors)));
+    const currentA = Math.max(...cases.map((factors) => imbalanceA(byItem, ends, factors)));
     const circuitIds = [...new Set(ends.map(({ item }) => plan.items[item]?.id ?? ""))];
     return currentA > 0 ? [{ at: [...first.at] as [number, number, number], currentA, circuitIds }] : [];
   });
@@ -74,22 +76,22 @@ function pathEnds(plan: CompiledPlan): End[] {
   });
 }
 
-function imbalanceA(plan: CompiledPlan, ends: End[], factors: CaseFactors): number {
-  const sums = new Float64Array(2 * plan.frequencies.groups.length);
+function imbalanceA(byItem: readonly Component[][], ends: End[], factors: CaseFactors): number {
+  const sums = new Map<number, [number, number]>();
   let largestA = 0;
   for (const { item, sense } of ends) {
-    for (const component of plan.components) {
-      if (component.item !== item) continue;
+    for (const { group, drive } of byItem[item] ?? []) {
       const factor = (factors.items[item] as number) * sense;
-      const { currents } = component.drive;
-      for (let i = 0; i < currents.length; i += 2) {
-        const [re, im] = [factor * (currents[i] as number), factor * (currents[i + 1] as number)];
-        sums[2 * component.group] = (sums[2 * component.group] as number) + re;
-        sums[2 * component.group + 1] = (sums[2 * component.group + 1] as number) + im;
+      const sum = sums.get(group) ?? [0, 0];
+      for (let i = 0; i < drive.currents.length; i += 2) {
+        const [re, im] = [factor * (drive.currents[i] as number), factor * (drive.currents[i + 1] as number)];
+        sum[0] += re;
+        sum[1] += im;
         largestA = Math.max(largestA, Math.hypot(re, im));
       }
+      sums.set(group, sum);
     }
   }
-  const total = Math.hypot(...sums);
+  const total = Math.sqrt([...sums.values()].reduce((squares, [re, im]) => squares + re * re + im * im, 0));
   return total > NOTICED * largestA ? total : 0;
 }
