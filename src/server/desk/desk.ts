@@ -23,6 +23,7 @@ export interface DeskSite {
   id: string;
   name: string;
   place: string;
+  timeZone: string;
   plans: PlanSummary[];
 }
 

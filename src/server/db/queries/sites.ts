@@ -18,7 +18,7 @@ export async function findSite(db: Queryable, organisationId: string, siteId: st
 export async function listSites(db: Queryable, organisationId: string, siteIds: readonly string[] | null) {
   if (siteIds?.length === 0) return [];
   return db
-    .select({ id: sites.id, name: sites.name, place: sites.place })
+    .select({ id: sites.id, name: sites.name, place: sites.place, timeZone: sites.timeZone })
     .from(sites)
     .where(
       and(
