@@ -6,6 +6,7 @@ import {
   type PlanDocument,
   type PlanDocumentInput,
 } from "~/domain/plan-document/plan-document";
+import type { ScreeningResult } from "~/domain/screening-result";
 import { RefusedDocumentError } from "~/screening/refusal";
 import { screen } from "~/screening/screen";
 import { oracleField } from "../oracles/biot-savart";
@@ -95,14 +96,14 @@ function planOf(
 }
 
 /** Screens unless a random path is one that is refused; sharp bends are bevelled, which the oracle does not know. */
-function screened(document: PlanDocument) {
+function screened(document: PlanDocument): ScreeningResult {
   try {
     const result = screen(document);
     fc.pre(!result.checks.warnings.some((warning) => /bevelled|inside a conductor/.test(warning)));
     return result;
   } catch (error) {
     if (!(error instanceof RefusedDocumentError)) throw error;
-    return fc.pre(false);
+    throw new fc.PreconditionFailure();
   }
 }
 

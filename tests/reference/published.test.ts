@@ -2,7 +2,7 @@ import { describe, expect, it } from "vitest";
 import { REFERENCE_CASES } from "./cases/all";
 import { toleranceOf } from "./reference-case";
 
-describe("published figures", () => {
+describe("published figures", { timeout: 30_000 }, () => {
   it.each(REFERENCE_CASES.map((entry) => [entry.id, entry] as const))(
     "meets %s within its rounding",
     (_id, entry) => {
