@@ -107,7 +107,18 @@ function showRefusal(form: HTMLFormElement, refusal: ApiRefusal): void {
       ? "You have been signed out. Sign in in another window, then try again here."
       : refusal.message;
   if (first === null || homeless.length > 0) showMessage(form, [text, ...homeless].join(" "));
+  const { signInAgain } = refusal.detail;
+  if (refusal.code === "sign-in.too-old" && typeof signInAgain === "string") offerSignIn(form, signInAgain);
   first?.focus();
+}
+
+/** In another window, so that nothing typed here is lost. */
+function offerSignIn(form: HTMLFormElement, address: string): void {
+  const link = document.createElement("a");
+  link.href = address;
+  link.target = "_blank";
+  link.textContent = "Sign in again in another window";
+  form.querySelector("[data-message]")?.append(" ", link, ".");
 }
 
 function showMessage(form: HTMLFormElement, text: string): void {

@@ -28,13 +28,30 @@ export const activityEvents = {
   "plan.screened": "screened the plan",
   "notice.composed": "composed a notice",
   "notice.issued": "issued a notice",
-  "delivery.sent": "delivered a notice",
-  "delivery.failed": "could not deliver a notice",
+  "delivery.sent": "delivered a message",
+  "delivery.failed": "could not deliver a message",
   "delivery.tried-again": "had a delivery tried again",
   "delivery.given-up": "gave a delivery up",
+  "revision.submitted": "submitted a revision",
+  "revision.commented": "commented on a position",
+  "revision.decided": "decided on a position",
+  "revision.returned": "returned a revision",
+  "revision.released": "released a revision",
+  "revision.superseded": "superseded a revision",
+  "revision.recomputed": "recomputed a revision",
+  "concession.ended": "turned an expired concession into held",
 } as const;
 
 export type ActivityEvent = keyof typeof activityEvents;
 
 export type ActivitySubject =
-  "session" | "member" | "invitation" | "site" | "plan" | "drawing" | "screening" | "notice" | "delivery";
+  | "session"
+  | "member"
+  | "invitation"
+  | "site"
+  | "plan"
+  | "drawing"
+  | "screening"
+  | "notice"
+  | "delivery"
+  | "revision";

@@ -3,7 +3,7 @@ export const deliveryStates = ["waiting", "sent", "failed"] as const;
 export type DeliveryState = (typeof deliveryStates)[number];
 
 /** What a message of the outbox is; tokens of sign-in links and invitations are made when it is sent. */
-export const deliveryKinds = ["notice", "sign-in-link", "invitation"] as const;
+export const deliveryKinds = ["notice", "sign-in-link", "invitation", "revision"] as const;
 export type DeliveryKind = (typeof deliveryKinds)[number];
 
 const minuteMs = 60_000;

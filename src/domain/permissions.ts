@@ -51,6 +51,13 @@ export const permissions = {
   "screening.run": { scope: "plan", allow: ["planner", "auditor"] },
   "notice.read": { scope: "plan", allow: office },
   "notice.issue": { scope: "plan", allow: ["planner"] },
+  "revision.read": { scope: "plan", allow: office },
+  "revision.submit": { scope: "plan", allow: ["planner"] },
+  "revision.comment": { scope: "plan", allow: ["planner", "auditor"] },
+  "revision.recompute": { scope: "plan", allow: ["planner", "auditor"] },
+  "revision.decide": { scope: "plan", allow: ["auditor"] },
+  "revision.release": { scope: "plan", allow: ["auditor"] },
+  "revision.return": { scope: "plan", allow: ["auditor"] },
 } as const satisfies Record<string, Permission>;
 
 export type Action = keyof typeof permissions;

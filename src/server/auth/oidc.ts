@@ -19,6 +19,8 @@ interface Wanted {
   /** Short name; one that is not known is passed over, so that nobody learns which organisations there are. */
   organisation?: string | undefined;
   returnTo?: string | undefined;
+  /** Whether the person has to prove anew who they are. */
+  fresh?: boolean | undefined;
 }
 
 /** Sends the browser to the provider with a state, a nonce and a code challenge that only this browser can come back with. */
@@ -26,7 +28,7 @@ export async function startSignIn(cookies: AstroCookies, wanted: Wanted): Promis
   const secrets = { state: newToken(), nonce: newToken(), codeVerifier: newToken() };
   let url: URL;
   try {
-    url = await authorisationUrl(secrets);
+    url = await authorisationUrl(secrets, wanted.fresh);
   } catch (error) {
     log().warn({ failure: describeFailure(error) }, "sign-in provider not reached");
     return { problem: "provider-unavailable" };
@@ -39,6 +41,8 @@ export async function startSignIn(cookies: AstroCookies, wanted: Wanted): Promis
     returnTo: safeReturnTo(wanted.returnTo),
     subject: null,
     invitationLinkId: null,
+    authenticatedAt: null,
+    wantsFresh: wanted.fresh ?? false,
   });
   return { goTo: url.href };
 }
@@ -67,23 +71,23 @@ export async function finishSignIn(cookies: AstroCookies, answer: ProviderAnswer
   }
   if (answer.code === undefined) return { problem: "provider-refused" };
 
-  let subject: string;
+  let proven: Awaited<ReturnType<typeof verifiedSubject>>;
   try {
-    subject = await verifiedSubject(answer.code, pending);
+    proven = await verifiedSubject(answer.code, pending, pending.wantsFresh);
   } catch (error) {
     log().warn({ failure: describeFailure(error) }, "sign-in not confirmed by the provider");
     return { problem: signInProblemOf(error) };
   }
-  const people = (await findByIdentity(db(), env().oidc.issuer, subject)).filter(
+  const people = (await findByIdentity(db(), env().oidc.issuer, proven.subject)).filter(
     (person) => pending.organisationId === null || person.organisationId === pending.organisationId,
   );
   const [person] = people;
   if (person === undefined) return { problem: "unknown-person" };
   if (people.length > 1) {
-    await keepPending(db(), cookies, { ...pending, subject });
+    await keepPending(db(), cookies, { ...pending, ...proven });
     return { goTo: "/sign-in/organisation" };
   }
-  return goOn(pending.returnTo, await signIn(cookies, async () => proofOf(person)));
+  return goOn(pending.returnTo, await signIn(cookies, async () => proofOf(person, proven.authenticatedAt)));
 }
 
 /** The organisations among which a verified person has to choose; empty when nobody has to. */
@@ -102,16 +106,17 @@ export async function chooseOrganisation(cookies: AstroCookies, organisationId: 
   if (person === undefined) return { problem: "unknown-person" };
   removeCookie(cookies, pendingCookieName());
   const problem = await signIn(cookies, async (tx) =>
-    (await deletePendingSignIn(tx, pending.id)) ? proofOf(person) : { problem: "expired" },
+    (await deletePendingSignIn(tx, pending.id))
+      ? proofOf(person, pending.authenticatedAt)
+      : { problem: "expired" },
   );
   return goOn(pending.returnTo, problem);
 }
 
-const proofOf = ({ userId, organisationId }: { userId: string; organisationId: string }): Proof => ({
-  userId,
-  organisationId,
-  by: "provider",
-});
+const proofOf = (
+  { userId, organisationId }: { userId: string; organisationId: string },
+  authenticatedAt: Date | null,
+): Proof => ({ userId, organisationId, by: "provider", authenticatedAt });
 
 const goOn = (returnTo: string, problem: SignInProblem | null): NextStep =>
   problem === null ? { goTo: returnTo } : { problem };

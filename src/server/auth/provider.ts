@@ -1,7 +1,9 @@
 import { CodeChallengeMethod, OAuth2Client } from "arctic";
 import { createRemoteJWKSet, jwtVerify } from "jose";
 import { z } from "zod";
+import { freshSignInMs } from "~/domain/revision";
 import { env } from "../env";
+import { isFreshSignIn } from "./fresh-sign-in";
 import { sameSecret } from "./secrets";
 import { within } from "./within";
 
@@ -62,8 +64,16 @@ interface Secrets {
   codeVerifier: string;
 }
 
-/** Where to send a browser that wants to sign in. @throws when the provider does not answer */
-export async function authorisationUrl({ state, nonce, codeVerifier }: Secrets): Promise<URL> {
+/**
+ * Where to send a browser that wants to sign in.
+ * @param wantsFresh whether the person has to prove anew who they are, and the provider to say when they did
+ *   (OpenID Connect Core 1.0, section 3.1.2.1)
+ * @throws when the provider does not answer
+ */
+export async function authorisationUrl(
+  { state, nonce, codeVerifier }: Secrets,
+  wantsFresh = false,
+): Promise<URL> {
   const { authorizationEndpoint } = await discover();
   // No more than who it is: names and addresses are kept here, by the organisation's admin.
   const url = client().createAuthorizationURLWithPKCE(
@@ -74,21 +84,35 @@ export async function authorisationUrl({ state, nonce, codeVerifier }: Secrets):
     ["openid"],
   );
   url.searchParams.set("nonce", nonce);
+  if (wantsFresh) {
+    url.searchParams.set("prompt", "login");
+    url.searchParams.set("max_age", String(freshSignInMs / 1000));
+  }
   return url;
 }
+
+/** A clock that runs ahead of ours must not make a proof last longer. */
+const provenAt = (authTimeS: number | undefined): Date | null =>
+  authTimeS === undefined ? null : new Date(Math.min(authTimeS * 1000, Date.now()));
 
 const claimsSchema = z.object({
   sub: z.string().min(1).max(255),
   nonce: z.string(),
   azp: z.string().optional(),
+  auth_time: z.number().optional(),
 });
 
 /**
  * Exchanges the code and verifies the ID token (OpenID Connect Core 1.0, section 3.1.3.7).
- * @returns the subject
+ * @param wantsFresh whether a proof that is not of the last minutes, or has no time, is refused
+ * @returns the subject, and when they proved who they are; null where the provider does not say
  * @throws whatever went wrong; `signInProblemOf` sorts it
  */
-export async function verifiedSubject(code: string, { nonce, codeVerifier }: Secrets): Promise<string> {
+export async function verifiedSubject(
+  code: string,
+  { nonce, codeVerifier }: Pick<Secrets, "nonce" | "codeVerifier">,
+  wantsFresh = false,
+): Promise<{ subject: string; authenticatedAt: Date | null }> {
   const { tokenEndpoint, keys } = await discover();
   const tokens = await within(
     answerWithinMs,
@@ -107,5 +131,8 @@ export async function verifiedSubject(code: string, { nonce, codeVerifier }: Sec
   const isForOthersToo = Array.isArray(payload.aud) && payload.aud.length > 1;
   if ((isForOthersToo || claims.azp !== undefined) && claims.azp !== clientId)
     throw new Error("The ID token was issued to another party.");
-  return claims.sub;
+  const authenticatedAt = provenAt(claims.auth_time);
+  if (wantsFresh && !isFreshSignIn(authenticatedAt, new Date()))
+    throw new Error("The ID token does not say that the person signed in anew.");
+  return { subject: claims.sub, authenticatedAt };
 }

@@ -6,6 +6,7 @@ import { findDrawing } from "../db/queries/drawings";
 import { findNotice } from "../db/queries/notices";
 import { findMember } from "../db/queries/people";
 import { findPlan } from "../db/queries/plans";
+import { findRevision } from "../db/queries/revisions";
 import { findScreening } from "../db/queries/screenings";
 import { findContact, findSite } from "../db/queries/sites";
 
@@ -19,6 +20,7 @@ export interface Scope {
   drawing?: Found<typeof findDrawing>;
   screening?: Found<typeof findScreening>;
   notice?: Found<typeof findNotice>;
+  revision?: Found<typeof findRevision>;
   person?: Found<typeof findMember>;
 }
 
@@ -62,6 +64,8 @@ export async function resolveScope(member: Member, params: Partial<Record<string
     scope.screening = found(await findScreening(db(), organisationId, scope.plan.id, id("screeningId")));
   if (scope.plan && params["noticeId"] !== undefined)
     scope.notice = found(await findNotice(db(), organisationId, scope.plan.id, id("noticeId")));
+  if (scope.plan && params["revisionId"] !== undefined)
+    scope.revision = found(await findRevision(db(), organisationId, scope.plan.id, id("revisionId")));
   if (params["userId"] !== undefined)
     scope.person = found(await findMember(db(), organisationId, id("userId")));
   return scope;

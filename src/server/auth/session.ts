@@ -50,9 +50,15 @@ export async function principalOf(cookies: AstroCookies, now = new Date()): Prom
 
 /**
  * Begins a session for somebody who has just proved who they are.
+ * @param authenticatedAt when they proved it: with a provider that may be long before
  * @returns the token for their cookie; only its hash is kept
  */
-export async function createSession(db: Queryable, userId: string, now = new Date()): Promise<string> {
+export async function createSession(
+  db: Queryable,
+  userId: string,
+  now = new Date(),
+  authenticatedAt = now,
+): Promise<string> {
   const token = newToken();
   await insertSession(db, {
     id: hashOf(token),
@@ -60,7 +66,7 @@ export async function createSession(db: Queryable, userId: string, now = new Dat
     createdAt: now,
     lastSeenAt: now,
     expiresAt: new Date(now.getTime() + sessionAbsoluteMs),
-    authenticatedAt: now,
+    authenticatedAt,
   });
   return token;
 }

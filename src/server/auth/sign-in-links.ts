@@ -79,7 +79,7 @@ export async function redeemSignInLink(db: Queryable, token: string, now = new D
   const person = await findUser(db, link.userId);
   return person === undefined
     ? { problem: "link-unusable" }
-    : { userId: person.id, organisationId: person.organisationId, by: "link" };
+    : { userId: person.id, organisationId: person.organisationId, by: "link", authenticatedAt: new Date() };
 }
 
 /** Signs in whoever holds a link's token. */

@@ -9,7 +9,17 @@ import { createSession, giveSessionCookie } from "./session";
 
 /** Who somebody has proved to be and by what, or why they have not. */
 export type Proof =
-  { userId: string; organisationId: string; by: "provider" | "link" } | { problem: SignInProblem };
+  | {
+      userId: string;
+      organisationId: string;
+      by: "provider" | "link";
+      /** When they proved it; null where the provider does not say. */
+      authenticatedAt?: Date | null;
+    }
+  | { problem: SignInProblem };
+
+/** A proof of unknown age does not pass for a fresh one. */
+const longAgo = new Date(0);
 
 /** Where the browser goes next, or why it cannot sign in. */
 export type NextStep = { goTo: string } | { problem: SignInProblem };
@@ -27,9 +37,9 @@ export async function signIn(
   const outcome = await db().transaction(async (tx) => {
     const proof = await prove(tx);
     if ("problem" in proof) return proof;
-    const { userId, organisationId, by } = proof;
+    const { userId, organisationId, by, authenticatedAt } = proof;
     if (before !== null) await deleteSession(tx, hashOf(before));
-    const token = await createSession(tx, userId);
+    const token = await createSession(tx, userId, new Date(), authenticatedAt ?? longAgo);
     await recordActivity(tx, {
       organisationId,
       actorId: userId,

@@ -48,7 +48,7 @@ async function attempt(transport: MailTransport, row: DeliveryRow, now: () => Da
 async function settle(row: DeliveryRow, outcome: Outcome): Promise<void> {
   await db().transaction(async (tx) => {
     const isOurs = await settleDelivery(tx, row, outcome);
-    if (!isOurs || row.kind !== "notice" || outcome.state === "waiting") return;
+    if (!isOurs || row.kind === "sign-in-link" || outcome.state === "waiting") return;
     await recordActivity(tx, {
       organisationId: row.organisationId,
       actorId: null,

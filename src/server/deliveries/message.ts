@@ -3,6 +3,7 @@ import { db } from "../db/client";
 import type { DeliveryRow } from "../db/queries/deliveries";
 import { findNoticeMessage, findRecipient } from "../db/queries/notices";
 import { findUser } from "../db/queries/people";
+import { findRevisionMail } from "../db/queries/revisions";
 import type { MailMessage } from "../mail/message";
 import { signInLinkMail } from "../mail/sign-in-link";
 
@@ -10,7 +11,20 @@ const minuteMs = 60_000;
 
 /** The outbox row's message; undefined when who or what it was about is no longer there. */
 export async function messageOf(row: DeliveryRow, now: Date): Promise<MailMessage | undefined> {
+  if (row.kind === "revision") return revisionMessage(row);
   return row.kind === "notice" ? noticeMessage(row) : signInMessage(row, now);
+}
+
+async function revisionMessage({
+  organisationId,
+  revisionMailId,
+  messageId,
+}: DeliveryRow): Promise<MailMessage | undefined> {
+  const mail =
+    revisionMailId === null ? undefined : await findRevisionMail(db(), organisationId, revisionMailId);
+  if (mail === undefined) return undefined;
+  const { toName, toEmail, subject, text, html } = mail;
+  return { messageId, to: { name: toName, email: toEmail }, subject, text, html, attachments: [] };
 }
 
 async function noticeMessage({

@@ -10,6 +10,7 @@ import { db, type Queryable } from "../db/client";
 import { findDrawing } from "../db/queries/drawings";
 import { findPlanDocument, replacePlanDocument } from "../db/queries/plan-documents";
 import { type PlanRow, renamePlan as renamePlanRow } from "../db/queries/plans";
+import { recordPlanEditor } from "../db/queries/revisions";
 import { planNameInput, withFreePlanName } from "./plans";
 
 /** Largest body of a save. */
@@ -59,6 +60,7 @@ export async function saveDocument(
       const savedAt = new Date();
       const next = { planId: plan.id, document: text, savedBy: member.userId, savedAt };
       if (!(await replacePlanDocument(tx, plan.organisationId, baseVersion, next))) return null;
+      await noteEditor(tx, member, plan, baseVersion + 1, savedAt);
       if (document.name !== plan.name) await takeName(tx, member, plan, document.name);
       return { version: baseVersion + 1, savedAt };
     }),
@@ -87,11 +89,20 @@ export async function renamePlan(member: Member, plan: PlanRow, name: string): P
           "state.conflict",
           "The plan was saved by somebody while you renamed it. Try again.",
         );
+      await noteEditor(tx, member, plan, version + 1, next.savedAt);
       await takeName(tx, member, plan, name);
     }),
   );
   return { version: version + 1 };
 }
+
+const noteEditor = (
+  tx: Queryable,
+  { userId }: Member,
+  { organisationId, id }: PlanRow,
+  lastVersion: number,
+  lastEditedAt: Date,
+): Promise<void> => recordPlanEditor(tx, { organisationId, planId: id, userId, lastVersion, lastEditedAt });
 
 async function takeName(tx: Queryable, member: Member, plan: PlanRow, name: string): Promise<void> {
   const { organisationId } = plan;

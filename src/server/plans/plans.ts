@@ -7,6 +7,7 @@ import { db } from "../db/client";
 import { isDuplicateEntry } from "../db/duplicate-entry";
 import { insertPlanDocument } from "../db/queries/plan-documents";
 import { insertPlan } from "../db/queries/plans";
+import { recordPlanEditor } from "../db/queries/revisions";
 import type { SiteRow } from "../db/queries/sites";
 import { earthFieldAt } from "../sites/earth-at-site";
 
@@ -66,6 +67,7 @@ export async function createPlan(
         savedBy: userId,
         savedAt: now,
       });
+      await recordPlanEditor(tx, { organisationId, planId: id, userId, lastVersion: 1, lastEditedAt: now });
       await recordActivity(tx, {
         organisationId,
         actorId: userId,

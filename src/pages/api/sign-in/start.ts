@@ -13,6 +13,8 @@ export const GET = endpoint(
       returnTo: z.string().optional(),
       organisation: z.string().max(64).optional(),
       invitation: z.string().max(1000).optional(),
+      /** Whether the person has to prove anew who they are. */
+      fresh: z.literal("1").optional(),
     }),
     responses: { 303: "empty" },
     refusals: ["rate.exceeded"],
@@ -20,6 +22,6 @@ export const GET = endpoint(
   ({ query, request, context }) =>
     orSignInPage(request, async () => {
       await limitRate("sign-in", clientNetwork(context));
-      return goOnTo(await startSignIn(context.cookies, query));
+      return goOnTo(await startSignIn(context.cookies, { ...query, fresh: query.fresh === "1" }));
     }),
 );

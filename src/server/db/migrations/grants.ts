@@ -2,7 +2,7 @@ import { createConnection, type Connection, type RowDataPacket } from "mysql2/pr
 import { MigrationFailure } from "./migration-failure";
 
 /** What is written once and never changed: the application's user may only add to it and read it. */
-const appendOnlyTables = new Set(["activity_log"]);
+const appendOnlyTables = new Set(["activity_log", "revision_contents", "decisions", "revision_comments"]);
 /** Its rows move on and never go. */
 const headsTable = "activity_heads";
 const migrationsTable = "__drizzle_migrations";

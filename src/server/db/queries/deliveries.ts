@@ -3,6 +3,7 @@ import type { DeliveryState } from "~/domain/delivery";
 import type { Queryable } from "../client";
 import { deliveries, noticeRecipients, notices } from "../schema/notices";
 import { users } from "../schema/people";
+import { revisionMails } from "../schema/revisions";
 
 export type DeliveryRow = typeof deliveries.$inferSelect;
 
@@ -98,18 +99,21 @@ export async function listDeliveries(db: Queryable, organisationId: string, limi
       recipientEmail: noticeRecipients.email,
       userName: users.name,
       userEmail: users.email,
+      mailName: revisionMails.toName,
+      mailEmail: revisionMails.toEmail,
     })
     .from(deliveries)
     .leftJoin(noticeRecipients, eq(noticeRecipients.id, deliveries.recipientId))
     .leftJoin(notices, eq(notices.id, noticeRecipients.noticeId))
     .leftJoin(users, eq(users.id, deliveries.userId))
+    .leftJoin(revisionMails, eq(revisionMails.id, deliveries.revisionMailId))
     .where(eq(deliveries.organisationId, organisationId))
     .orderBy(desc(deliveries.createdAt), desc(deliveries.id))
     .limit(limit);
-  return rows.map(({ recipientEmail, userName, userEmail, recipientName, ...row }) => ({
+  return rows.map(({ recipientEmail, userName, userEmail, mailName, mailEmail, recipientName, ...row }) => ({
     ...row,
-    recipientName: recipientName ?? userName ?? "",
-    email: recipientEmail ?? userEmail ?? "",
+    recipientName: recipientName ?? userName ?? mailName ?? "",
+    email: recipientEmail ?? userEmail ?? mailEmail ?? "",
   }));
 }
 

@@ -5,6 +5,7 @@ import { code, exactText, id, instant, label } from "../columns";
 import { invitations } from "./invitations";
 import { organisations, users } from "./people";
 import { screenings } from "./plans";
+import { revisionMails } from "./revisions";
 
 /** What a site's people are told after a screening. Versions of one screening's notice count up from 1. */
 export const notices = mysqlTable(
@@ -63,8 +64,8 @@ export const noticeRecipients = mysqlTable(
 
 /**
  * The outbox: one row for each message, written in the transaction of what it tells of and claimed by the delivery
- * worker. A notice's message names its recipient; a sign-in message names the person and an invitation's message the invitation; their tokens are made when
- * they are sent.
+ * worker. A notice's message names its recipient and one about a revision its stored text; a sign-in message names the
+ * person and an invitation's message the invitation: their tokens are made when they are sent.
  */
 export const deliveries = mysqlTable(
   "deliveries",
@@ -79,6 +80,9 @@ export const deliveries = mysqlTable(
       .references(() => noticeRecipients.id, { onDelete: "cascade" }),
     userId: id("user_id").references(() => users.id, { onDelete: "cascade" }),
     invitationId: id("invitation_id").references(() => invitations.id, { onDelete: "cascade" }),
+    revisionMailId: id("revision_mail_id")
+      .unique()
+      .references(() => revisionMails.id, { onDelete: "cascade" }),
     messageId: code("message_id", { length: 128 }).notNull().unique(),
     state: code("state", { length: 16 }).$type<DeliveryState>().notNull(),
     attempts: int("attempts").notNull(),

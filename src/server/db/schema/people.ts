@@ -1,4 +1,13 @@
-import { foreignKey, index, int, mysqlTable, primaryKey, unique, varchar } from "drizzle-orm/mysql-core";
+import {
+  boolean,
+  foreignKey,
+  index,
+  int,
+  mysqlTable,
+  primaryKey,
+  unique,
+  varchar,
+} from "drizzle-orm/mysql-core";
 import type { Role } from "~/domain/roles";
 import { code, exactText, id, instant, label, sha256Hex } from "../columns";
 
@@ -100,6 +109,10 @@ export const pendingSignIns = mysqlTable(
     subject: code("subject", { length: 255 }),
     /** Hash of the invitation's token, where somebody is about to accept one through the provider. */
     invitationLinkId: sha256Hex("invitation_link_id"),
+    /** When the provider says that the subject proved who they are; null before, and where it does not say. */
+    authenticatedAt: instant("authenticated_at"),
+    /** Whether the person has to prove anew who they are, whatever session they have at the provider. */
+    wantsFresh: boolean("wants_fresh").notNull().default(false),
     expiresAt: instant("expires_at").notNull(),
   },
   (t) => [index("pending_sign_ins_expiry").on(t.expiresAt)],
