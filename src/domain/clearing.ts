@@ -91,7 +91,10 @@ export type PlanPatch = z.output<typeof planPatchSchema>;
 /** A sensor's worst finding: `budgetUsed` = value / limit, `reach` = (value + U) / limit. */
 const standing = z.strictObject({ verdict: verdictSchema, budgetUsed: z.number(), reach: z.number() });
 
-/** One change by itself, re-screened: `gained` is the fall of `reach`, summed over the flagged sensors asked for. */
+/**
+ * One change by itself, re-screened: `gained` is the fall of (value + U) / limit, summed over every flagged limit of the sensors
+ * asked for; before and after are those sensors' worst findings.
+ */
 const singleChange = z.strictObject({
   kind: z.enum(CHANGE_KINDS),
   words: name,

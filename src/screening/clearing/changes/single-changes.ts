@@ -1,11 +1,12 @@
-import { patched, type SingleChange, type Standing } from "~/domain/clearing";
+import { patched, type SingleChange } from "~/domain/clearing";
 import type { Circuit } from "~/domain/plan-document/circuit";
 import type { PlanDocument } from "~/domain/plan-document/plan-document";
+import type { SensorResult } from "~/domain/screening-result";
 import { openEnds } from "../../checks/open-ends";
 import { preparePlan, screenSensor, type PreparedPlan } from "../../prepared-plan";
 import { RefusedDocumentError } from "../../refusal";
 import type { Steps } from "../../steps";
-import { standingOf } from "../standing";
+import { reachGained, standingOf } from "../standing";
 import { arrangementChanges } from "./arrangement-changes";
 import { knowledgeChanges } from "./knowledge-changes";
 import { circuitMoves, routeMoves } from "./moves";
@@ -28,7 +29,7 @@ export function* singleChangesOf(
   prepared: PreparedPlan,
   targets: readonly number[],
 ): Steps<SingleChange[]> {
-  const before = targets.map((index) => standingOf(screenSensor(prepared, index).result));
+  const before = targets.map((index) => screenSensor(prepared, index).result);
   const circuits = spendersAt(document, prepared, targets);
   const proposals = [
     ...circuits.flatMap((circuit) => ownChanges(document, circuit)),
@@ -58,17 +59,19 @@ function judged(
   document: PlanDocument,
   prepared: PreparedPlan,
   targets: readonly number[],
-  before: readonly Standing[],
+  before: readonly SensorResult[],
   { kind, words, ids, patch, movesSingles }: Proposal,
 ): SingleChange | null {
   const changed = preparedOrNull(patched(document, patch));
   if (!changed) return null;
   if (movesSingles && openEnds(changed.plan).length > openEnds(prepared.plan).length) return null;
-  const sensors = targets.map((index, i) => {
-    const { result } = screenSensor(changed, index);
-    return { id: result.id, before: before[i] as Standing, after: standingOf(result) };
-  });
-  const gained = sensors.reduce((sum, entry) => sum + entry.before.reach - entry.after.reach, 0);
+  const after = targets.map((index) => screenSensor(changed, index).result);
+  const sensors = before.map((result, i) => ({
+    id: result.id,
+    before: standingOf(result),
+    after: standingOf(after[i] ?? result),
+  }));
+  const gained = before.reduce((sum, result, i) => sum + reachGained(result, after[i] ?? result), 0);
   return { kind, words, ids, patch, gained, sensors, spoils: null };
 }
 
