@@ -21,6 +21,14 @@ export function record(history: History, label: string, before: unknown, after: 
   return { past: [...history.past, { label, difference }], future: [] };
 }
 
+/** Adds to the last checkpoint, which led to `before`, what leads on to `after`: both are undone at once. */
+export function extend(history: History, label: string, before: unknown, after: unknown): History {
+  const last = history.past.at(-1);
+  if (last === undefined) return record(history, label, before, after);
+  const shortened = { past: history.past.slice(0, -1), future: [] };
+  return record(shortened, label, applyDifference(before, invert(last.difference)), after);
+}
+
 export interface Stepped<T> {
   document: T;
   history: History;

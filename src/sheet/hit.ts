@@ -67,7 +67,7 @@ function hitLeg(document: PlanDocument, pointM: Point2, reachM: number): Leg | n
   return nearest;
 }
 
-/** What lies under the pointer: a sensor, else a vertex of what is selected, else the nearest route or circuit. */
+/** What lies under the pointer: a sensor or equipment, else a vertex of what is selected, else the nearest route or circuit. */
 export function hitAt(
   document: PlanDocument,
   selection: Selection,
@@ -76,6 +76,8 @@ export function hitAt(
 ): Hit | null {
   const sensor = nearestOf(document.sensors, ({ position }) => flatOf(position), pointM, reachM);
   if (sensor !== null) return { item: { kind: "sensor", id: sensor.id }, leg: null };
+  const equipment = nearestOf(document.equipment, ({ centre }) => flatOf(centre), pointM, reachM);
+  if (equipment !== null) return { item: { kind: "equipment", id: equipment.id }, leg: null };
   const vertex = hitVertex(document, selection, pointM, reachM);
   if (vertex !== null) return { item: vertex, leg: null };
   const leg = hitLeg(document, pointM, reachM);

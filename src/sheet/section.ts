@@ -1,10 +1,10 @@
 import type { PlanDocument } from "~/domain/plan-document/plan-document";
 import { ownedPaths, pathOf, withPath, type PathOwner } from "./edits/paths";
-import { tidyM, type Point2, type Point3 } from "./geometry";
-import type { Selection } from "./selection";
-import { toPlan, type SizePx, type View } from "./view";
+import { flatOf, type Point2, type Point3 } from "./geometry";
+import { alongM, offM, placeOnSlice, sliceOf, type Slice, type SliceThrough } from "./slice";
+import type { SizePx, View } from "./view";
 
-/** Where a leg passes through the slice: `at` is x and z in metres. */
+/** Where a leg passes through the slice: `at` is metres along the slice and height. */
 export interface Crossing {
   owner: PathOwner;
   name: string;
@@ -13,36 +13,49 @@ export interface Crossing {
   at: Point2;
 }
 
-/** A path seen along y, as x and z in metres. */
+/** A path seen across the slice, as metres along it and height. */
 export interface Profile {
   owner: PathOwner;
   points: readonly Point2[];
 }
 
-const isAcross = (a: Point3, b: Point3, sliceY: number): boolean =>
-  a[1] !== b[1] && sliceY >= Math.min(a[1], b[1]) && sliceY <= Math.max(a[1], b[1]);
+/** Rounding of a turned slice may not hide that a leg lies in it. */
+const inSliceM = 1e-9;
 
-/** Where paths pass through the vertical slice at `sliceY`; a leg that lies in it does not cross it. */
-export function crossingsAt(document: PlanDocument, sliceY: number): Crossing[] {
+/** How far along the leg it passes through the slice, 0 to 1; null where it does not. */
+function crossedAt(a: Point3, b: Point3, slice: Slice): number | null {
+  const [offA, offB] = [offM(slice, flatOf(a)), offM(slice, flatOf(b))];
+  if (Math.abs(offA - offB) < inSliceM || Math.min(offA, offB) > inSliceM || Math.max(offA, offB) < -inSliceM)
+    return null;
+  return Math.min(1, Math.max(0, offA / (offA - offB)));
+}
+
+/** Where paths pass through the slice, beyond the ends of its line too; a leg that lies in it does not cross it. */
+export function crossingsAt(document: PlanDocument, slice: Slice): Crossing[] {
   return ownedPaths(document).flatMap(({ owner, name, path }) =>
     path.slice(1).flatMap((b, leg) => {
       const a = path[leg] as Point3;
-      if (!isAcross(a, b, sliceY)) return [];
-      const along = (sliceY - a[1]) / (b[1] - a[1]);
-      const at: Point2 = [a[0] + along * (b[0] - a[0]), a[2] + along * (b[2] - a[2])];
+      const share = crossedAt(a, b, slice);
+      if (share === null) return [];
+      const flat: Point2 = [a[0] + share * (b[0] - a[0]), a[1] + share * (b[1] - a[1])];
+      const at: Point2 = [alongM(slice, flat), a[2] + share * (b[2] - a[2])];
       return [{ owner, name, leg, at }];
     }),
   );
 }
 
-export const profilesOf = (document: PlanDocument): Profile[] =>
-  ownedPaths(document).map(({ owner, path }) => ({ owner, points: path.map(([x, , z]): Point2 => [x, z]) }));
+export const profilesOf = (document: PlanDocument, slice: Slice): Profile[] =>
+  ownedPaths(document).map(({ owner, path }) => ({
+    owner,
+    points: path.map((vertex): Point2 => [alongM(slice, flatOf(vertex)), vertex[2]]),
+  }));
 
 /** The heights that a section has to show, floor and ceiling of an ordinary room among them. */
 export function heightRange(document: PlanDocument): { lowM: number; highM: number } {
   const heights = [
     ...ownedPaths(document).flatMap(({ path }) => path.map(([, , z]) => z)),
     ...document.sensors.map(({ position }) => position[2]),
+    ...document.equipment.map(({ centre }) => centre[2]),
   ];
   return { lowM: Math.min(0, ...heights), highM: Math.max(3, ...heights) };
 }
@@ -66,48 +79,40 @@ export function liftRun(document: PlanDocument, owner: PathOwner, leg: number, b
 export const strip = { heightPx: 168, marginPx: 22 } as const;
 
 export interface SectionFrame {
-  /** The slice stands at this y. */
-  sliceY: number;
-  /** What lies in the middle of the strip. */
-  centreX: number;
+  slice: Slice;
   /** Pixels per metre, in both directions. */
   scale: number;
   lowM: number;
   highM: number;
-  /** The sensor that it goes through; null where it goes through the middle of the view. */
-  sensorName: string | null;
 }
 
-/** Through the selected sensor, else through the middle of what the drawing shows; to scale, all heights in view. */
+/** To scale, with all heights in view; a section line that is longer than the strip shows its middle. */
 export function sectionFrame(
   document: PlanDocument,
-  selection: Selection,
+  through: SliceThrough,
   view: View,
   size: SizePx,
 ): SectionFrame {
-  const [chosen] = selection.filter((item) => item.kind === "sensor");
-  const sensor = document.sensors.find(({ id }) => id === chosen?.id);
-  const middle = toPlan(view, [size.width / 2, size.height / 2]);
   const { lowM, highM } = heightRange(document);
   return {
-    sliceY: sensor?.position[1] ?? tidyM(middle[1]),
-    centreX: sensor?.position[0] ?? middle[0],
+    slice: sliceOf(document, through, view, size),
     scale: (strip.heightPx - 2 * strip.marginPx) / (highM - lowM),
     lowM,
     highM,
-    sensorName: sensor?.name ?? null,
   };
 }
 
-/** A grid of x and z over the whole strip, `rows` high. */
+/** A grid over the whole strip, `rows` high: from `along0M` on along the slice, which is `origin` on the plan. */
 export function sectionGrid(
-  { centreX, scale, lowM }: SectionFrame,
+  { slice, scale, lowM }: SectionFrame,
   widthPx: number,
   rows: number,
-): { x0M: number; z0M: number; stepM: number; columns: number; rows: number } {
+): { along0M: number; origin: Point2; z0M: number; stepM: number; columns: number; rows: number } {
   const stepM = strip.heightPx / scale / (rows - 1);
+  const along0M = slice.centreM - widthPx / 2 / scale;
   return {
-    x0M: centreX - widthPx / 2 / scale,
+    along0M,
+    origin: placeOnSlice(slice, along0M),
     z0M: lowM - strip.marginPx / scale,
     stepM,
     columns: Math.max(2, Math.ceil(widthPx / scale / stepM) + 1),

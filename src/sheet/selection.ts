@@ -3,6 +3,7 @@ import { circuitsOn, ownerOfCircuit, pathOf, sameOwner, type PathOwner } from ".
 
 export type SelectedItem =
   | { kind: "sensor"; id: string }
+  | { kind: "equipment"; id: string }
   | { kind: "circuit"; id: string }
   | { kind: "route"; id: string }
   | { kind: "vertex"; owner: PathOwner; index: number };
@@ -48,7 +49,12 @@ function ownerOfItem(document: PlanDocument, item: SelectedItem): PathOwner | nu
 export function stillThere(document: PlanDocument, selection: Selection): Selection {
   const kept = selection.filter((item) => {
     if (item.kind === "vertex") return pathOf(document, item.owner)?.[item.index] !== undefined;
-    const list = { sensor: document.sensors, circuit: document.circuits, route: document.routes }[item.kind];
+    const list = {
+      sensor: document.sensors,
+      equipment: document.equipment,
+      circuit: document.circuits,
+      route: document.routes,
+    }[item.kind];
     return list.some(({ id }: { id: string }) => id === item.id);
   });
   return kept.length === selection.length ? selection : kept;

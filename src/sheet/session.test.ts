@@ -63,6 +63,19 @@ describe("a session", () => {
     expect(undoLast(placed).selection).toHaveLength(0);
   });
 
+  it("takes back several arrow keys in a row at once, but not across anything else", () => {
+    const arrow = (session: Session) => keyPressed(session, "ArrowRight", noModifiers, around);
+    const xOf = ({ document }: Session) => document.sensors[0]?.position[0];
+    const placed = place(beginSession(emptyPlanDocument("Hall")), [2, 2]);
+    const nudged = arrow(arrow(arrow(placed)));
+    expect(xOf(nudged)).toBeCloseTo(2.3);
+    expect(xOf(undoLast(nudged))).toBe(2);
+    expect(xOf(redoNext(undoLast(nudged)))).toBeCloseTo(2.3);
+    const again = arrow(drag(nudged, [2.3, 2], [5, 2]));
+    expect(xOf(undoLast(again))).toBe(5);
+    expect(xOf(undoLast(undoLast(again)))).toBeCloseTo(2.3);
+  });
+
   it("equals its model under random edits, undos and redos", () => {
     const coordinates = fc.tuple(fc.integer({ min: 0, max: 20 }), fc.integer({ min: 0, max: 20 }));
     const actions = fc.array(

@@ -1,6 +1,6 @@
 import type { PlanDocument } from "~/domain/plan-document/plan-document";
 import type { Point2 } from "./geometry";
-import { emptyHistory, record, redo, undo, type History } from "./history";
+import { emptyHistory, extend, record, redo, undo, type History } from "./history";
 import { stillThere, type Selection } from "./selection";
 import type { Modifiers } from "./snapping";
 import { beginSelect } from "./steps/select";
@@ -14,6 +14,8 @@ export interface Session {
   step: Step;
   /** Told to whoever can't see the drawing: what the last edit was. */
   announcement: string;
+  /** What the last edit was, where the next one like it joins it in one undo; null after anything else. */
+  joining: string | null;
 }
 
 export type PointerEventKind = "press" | "move" | "drag" | "release";
@@ -24,6 +26,7 @@ export const beginSession = (document: PlanDocument, history: History = emptyHis
   selection: [],
   step: beginSelect(0),
   announcement: "",
+  joining: null,
 });
 
 /** What shows: the document as the running drag would leave it. */
@@ -42,9 +45,15 @@ function take(session: Session, result: StepResult): Session {
     return { ...session, step: beginSelect(session.selection.length), announcement: "Step ended." };
   }
   if (result.kind === "going") {
-    return { ...session, step: result.step, selection: result.select ?? session.selection };
+    const selection = result.select ?? session.selection;
+    return {
+      ...session,
+      step: result.step,
+      selection,
+      joining: selection === session.selection ? session.joining : null,
+    };
   }
-  const edited = edit(session, result.label, result.document, result.select);
+  const edited = edit(session, result.label, result.document, result.select, result.joins);
   return { ...edited, step: beginSelect(edited.selection.length) };
 }
 
@@ -75,20 +84,24 @@ export const beginStep = (
 export const select = (session: Session, selection: Selection): Session => ({
   ...session,
   selection,
+  joining: null,
   step: session.step.name === "select" ? beginSelect(selection.length) : session.step,
 });
 
-/** Makes an edit and its checkpoint. */
+/** Makes an edit and its checkpoint; one that `joins` the edit before it is undone with it. */
 export function edit(
   session: Session,
   label: string,
   document: PlanDocument,
   selection?: Selection,
+  joins?: string,
 ): Session {
-  const history = record(session.history, label, session.document, document);
+  const joined = joins !== undefined && joins === session.joining;
+  const history = (joined ? extend : record)(session.history, label, session.document, document);
   if (history === session.history) return selection === undefined ? session : select(session, selection);
   const kept = stillThere(document, selection ?? session.selection);
-  return select({ ...session, document, history, announcement: `${label}: done.` }, kept);
+  const edited = select({ ...session, document, history, announcement: `${label}: done.` }, kept);
+  return { ...edited, joining: joins ?? null };
 }
 
 export function undoLast(session: Session): Session {

@@ -1,4 +1,5 @@
 import { useRef, type ReactNode } from "react";
+import type { Point2 } from "~/sheet/geometry";
 import { numberText } from "~/sheet/read-number";
 
 interface Props {
@@ -75,5 +76,15 @@ export function HeightHandle(props: Props) {
       <circle r="12" fill="transparent" />
       {children}
     </g>
+  );
+}
+
+/** The name and the height beside a handle, where there is room for them. */
+export function HandleLabel({ at, text }: { at: Point2 | undefined; text: string }) {
+  if (at === undefined) return null;
+  return (
+    <text x={at[0]} y={at[1] + 12} className="fill-ink text-xs">
+      {text}
+    </text>
   );
 }

@@ -1,13 +1,17 @@
 import { useState } from "react";
-import { circuitsOn, sameOwner, type PathOwner } from "~/sheet/edits/paths";
+import { updateEquipment } from "~/sheet/edits/equipment";
+import { circuitsOn, sameOwner, tidyPoint, type PathOwner } from "~/sheet/edits/paths";
 import { updateSensor } from "~/sheet/edits/sensors";
 import { crossingsAt, liftRun, profilesOf, sectionFrame, strip } from "~/sheet/section";
 import { placeLabels } from "~/sheet/label-places";
 import { itemOfPath, selectedOwners } from "~/sheet/selection";
-import { tidyM } from "~/sheet/geometry";
+import { flatOf, tidyM, type Point3 } from "~/sheet/geometry";
+import { alongM, offM, type Slice } from "~/sheet/slice";
 import { gridStepM } from "~/sheet/view";
 import { SectionLines } from "./map/SectionLines";
-import { HeightHandle } from "./HeightHandle";
+import { SectionEquipment } from "./equipment/SectionEquipment";
+import { HandleLabel, HeightHandle } from "./HeightHandle";
+import { SliceChoice } from "./SliceChoice";
 import { useEditable, useSelection, useSheet, useSheetStore, useShownDocument } from "./store";
 
 /** Height labels stand at least this far apart. */
@@ -15,7 +19,7 @@ const labelApartPx = 17;
 /** Sensors nearer than this to the slice stand in it; others are left out. */
 const sliceDepthM = 0.75;
 
-/** A vertical slice along x, to scale in both directions, with heights to drag or to change by arrow keys. */
+/** A vertical slice, to scale in both directions, with heights to drag or to change by arrow keys. */
 export function SectionStrip() {
   const store = useSheetStore();
   const document = useShownDocument();
@@ -25,21 +29,26 @@ export function SectionStrip() {
   const size = useSheet((state) => state.size);
   const { width } = size;
   const litId = useSheet((state) => state.litId);
-  const frame = sectionFrame(document, selection, view, size);
-  const { sliceY, centreX, scale, lowM, highM } = frame;
+  const through = useSheet((state) => state.sliceThrough);
+  const { slice, scale, lowM, highM } = sectionFrame(document, through, view, size);
   const [liftM, setLiftM] = useState<{ key: string; byM: number } | null>(null);
-  const px = (x: number): number => width / 2 + (x - centreX) * scale;
+  const px = (x: number): number => width / 2 + (x - slice.centreM) * scale;
   const py = (z: number): number => strip.heightPx - strip.marginPx - (z - lowM) * scale;
-  const crossings = crossingsAt(document, sliceY);
-  const sensors = document.sensors.filter(({ position }) => Math.abs(position[1] - sliceY) <= sliceDepthM);
+  const crossings = crossingsAt(document, slice);
+  const isNear = (place: Point3): boolean => Math.abs(offM(slice, flatOf(place))) <= sliceDepthM;
+  const sensors = document.sensors.filter(({ position }) => isNear(position));
+  const equipment = document.equipment.filter(({ centre }) => isNear(centre));
   const isChosen = (id: string): boolean =>
-    selection.some((item) => item.kind === "sensor" && item.id === id);
+    selection.some((item) => (item.kind === "sensor" || item.kind === "equipment") && item.id === id);
   const labels = placeLabels(
-    sensors
-      .map(({ id, name, position: [x, , z] }) => ({
+    [
+      ...sensors.map(({ id, name, position }) => ({ id, name, place: position })),
+      ...equipment.map(({ id, name, centre }) => ({ id, name, place: centre })),
+    ]
+      .map(({ id, name, place }) => ({
         id,
-        at: [px(x), py(z)] as const,
-        text: `${name}, ${z.toFixed(2)} m`,
+        at: [px(alongM(slice, flatOf(place))), py(place[2])] as const,
+        text: `${name}, ${place[2].toFixed(2)} m`,
       }))
       .sort((a, b) => Number(isChosen(b.id)) - Number(isChosen(a.id))),
     { clearPx: 13, linePx: 16, letterPx: 6.5 },
@@ -69,16 +78,11 @@ export function SectionStrip() {
   return (
     <section aria-label="Section strip" className="border-b border-rule bg-raised">
       <h2 className="sr-only">Section strip</h2>
-      <p className="px-3 pt-1 text-xs text-muted">
-        Section at y = {sliceY.toFixed(2)} m,{" "}
-        {frame.sensorName === null
-          ? "through the middle of the view; select a sensor to slice through it"
-          : `through ${frame.sensorName}`}
-      </p>
+      <SliceChoice slice={slice} />
       <svg width={width} height={strip.heightPx} className="block" role="group" aria-label="Section drawing">
-        <Scale lowM={lowM} highM={highM} px={px} py={py} width={width} centreX={centreX} scale={scale} />
+        <Scale lowM={lowM} highM={highM} px={px} py={py} width={width} slice={slice} scale={scale} />
         <SectionLines px={px} py={py} scale={scale} />
-        {profilesOf(document).map(({ owner, points }) => (
+        {profilesOf(document, slice).map(({ owner, points }) => (
           <polyline
             key={`${owner.list}/${owner.id}`}
             points={points.map(([x, z]) => `${px(x)},${py(z)}`).join(" ")}
@@ -91,8 +95,13 @@ export function SectionStrip() {
         {crossings.map(({ owner, name, leg, at }) => (
           <HeightHandle
             key={`${owner.list}/${owner.id}/${leg}`}
-            {...handle(`${owner.id}/${leg}`, `Height of ${name} at x ${at[0].toFixed(2)} m`, at, (byM) =>
-              store.edit(`Lift ${name}`, (whole) => liftRun(whole, owner, leg, byM)),
+            {...handle(`${owner.id}/${leg}`, `Height of ${name} at ${at[0].toFixed(2)} m`, at, (byM) =>
+              store.edit(
+                `Lift ${name}`,
+                (whole) => liftRun(whole, owner, leg, byM),
+                undefined,
+                `lift ${owner.id}/${leg}`,
+              ),
             )}
             onFocus={() => store.select([itemOfPath(document, owner)])}
           >
@@ -103,17 +112,48 @@ export function SectionStrip() {
             />
           </HeightHandle>
         ))}
+        {equipment.map((item) => (
+          <HeightHandle
+            key={item.id}
+            {...handle(
+              item.id,
+              `Height of ${item.name}`,
+              [alongM(slice, flatOf(item.centre)), item.centre[2]],
+              (byM) =>
+                store.edit(
+                  `Height of ${item.name}`,
+                  (whole) =>
+                    updateEquipment(whole, item.id, (present) => ({
+                      ...present,
+                      centre: tidyPoint([present.centre[0], present.centre[1], present.centre[2] + byM]),
+                    })),
+                  undefined,
+                  `lift ${item.id}`,
+                ),
+            )}
+          >
+            <SectionEquipment item={item} along={slice.along} lit={isChosen(item.id) || item.id === litId} />
+            <HandleLabel
+              at={labels.get(item.id)}
+              text={`${item.name}, ${(item.centre[2] + (liftM?.key === item.id ? liftM.byM : 0)).toFixed(2)} m`}
+            />
+          </HeightHandle>
+        ))}
         {sensors.map(({ id, name, position }) => {
           const chosen = isChosen(id);
           return (
             <HeightHandle
               key={id}
-              {...handle(id, `Height of ${name}`, [position[0], position[2]], (byM) =>
-                store.edit(`Height of ${name}`, (whole) =>
-                  updateSensor(whole, id, (sensor) => ({
-                    ...sensor,
-                    position: [sensor.position[0], sensor.position[1], tidyM(sensor.position[2] + byM)],
-                  })),
+              {...handle(id, `Height of ${name}`, [alongM(slice, flatOf(position)), position[2]], (byM) =>
+                store.edit(
+                  `Height of ${name}`,
+                  (whole) =>
+                    updateSensor(whole, id, (sensor) => ({
+                      ...sensor,
+                      position: [sensor.position[0], sensor.position[1], tidyM(sensor.position[2] + byM)],
+                    })),
+                  undefined,
+                  `lift ${id}`,
                 ),
               )}
             >
@@ -123,15 +163,10 @@ export function SectionStrip() {
                 strokeWidth={chosen ? 3 : 1.75}
               />
               <line y1="-7" y2="7" className="stroke-ink" strokeWidth="1.75" />
-              {labels.has(id) && (
-                <text
-                  x={labels.get(id)?.[0]}
-                  y={(labels.get(id)?.[1] ?? 0) + 12}
-                  className="fill-ink text-xs"
-                >
-                  {`${name}, ${(position[2] + (liftM?.key === id ? liftM.byM : 0)).toFixed(2)} m`}
-                </text>
-              )}
+              <HandleLabel
+                at={labels.get(id)}
+                text={`${name}, ${(position[2] + (liftM?.key === id ? liftM.byM : 0)).toFixed(2)} m`}
+              />
             </HeightHandle>
           );
         })}
@@ -146,21 +181,34 @@ interface ScaleProps {
   px: (x: number) => number;
   py: (z: number) => number;
   width: number;
-  centreX: number;
+  slice: Slice;
   scale: number;
 }
 
 /** The floor, a line for each metre of height, and ticks for each metre along the slice. */
-function Scale({ lowM, highM, px, py, width, centreX, scale }: ScaleProps) {
+function Scale({ lowM, highM, px, py, width, slice, scale }: ScaleProps) {
   const everyM = gridStepM(scale, labelApartPx);
   const heights: number[] = [];
   for (let z = Math.ceil(lowM / everyM) * everyM; z <= highM; z += everyM) heights.push(z);
   const along: number[] = [];
   const halfM = width / 2 / scale;
-  for (let x = Math.ceil((centreX - halfM) / everyM) * everyM; x <= centreX + halfM; x += everyM)
+  const { centreM, line } = slice;
+  for (let x = Math.ceil((centreM - halfM) / everyM) * everyM; x <= centreM + halfM; x += everyM)
     along.push(x);
   return (
     <g aria-hidden="true">
+      {line !== null &&
+        [line.fromM, line.toM].map((atM) => (
+          <line
+            key={atM}
+            x1={px(atM)}
+            x2={px(atM)}
+            y1={py(highM)}
+            y2={py(lowM)}
+            className="stroke-rule-strong"
+            strokeDasharray="8 3 2 3"
+          />
+        ))}
       {heights.map((z) => (
         <g key={z}>
           <line

@@ -1,6 +1,7 @@
 import { Button } from "~/components/ui/Button";
 import { SENSOR_KINDS } from "~/domain/catalogue";
 import { beginMeasure } from "~/sheet/steps/measure";
+import { beginPlaceEquipment } from "~/sheet/steps/place-equipment";
 import { beginPlaceSensor } from "~/sheet/steps/place-sensor";
 import { beginSelect } from "~/sheet/steps/select";
 import { beginSetNorth } from "~/sheet/steps/set-north";
@@ -13,12 +14,13 @@ import { useDocument, useEditable, useSheet, useSheetStore } from "./store";
 /** Heights that most things have: trays under the ceiling, instruments on a bench. */
 const usualTrayM = 2.8;
 const usualSensorM = 1.1;
+const usualEquipmentM = 0.4;
 
 const lastHeightM = (heights: readonly number[], otherwiseM: number): number => heights.at(-1) ?? otherwiseM;
 
 export function beginStep(store: SheetStore, name: StepName, traceFor: TraceFor | null = null): void {
   store.begin((around) => {
-    const { routes, sensors, frame } = around.document;
+    const { routes, sensors, equipment, frame } = around.document;
     if (name === "set-scale") return beginSetScale();
     if (name === "set-north") return beginSetNorth(around);
     if (name === "measure") return beginMeasure(frame.northBearingDeg);
@@ -30,6 +32,10 @@ export function beginStep(store: SheetStore, name: StepName, traceFor: TraceFor 
           usualTrayM,
         ),
       );
+    }
+    if (name === "place-equipment") {
+      const last = equipment.at(-1);
+      return beginPlaceEquipment(last?.kind ?? "coil", last?.centre[2] ?? usualEquipmentM);
     }
     if (name === "place-sensor") {
       return beginPlaceSensor(

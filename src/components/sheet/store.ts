@@ -7,6 +7,7 @@ import type { Point2 } from "~/sheet/geometry";
 import type { Selection } from "~/sheet/selection";
 import * as sessions from "~/sheet/session";
 import type { PointerEventKind, Session } from "~/sheet/session";
+import type { SliceThrough } from "~/sheet/slice";
 import { defaultSnap, type Modifiers, type SnapSettings } from "~/sheet/snapping";
 import type { Step, Surroundings } from "~/sheet/steps/step";
 import type { SizePx, View } from "~/sheet/view";
@@ -56,6 +57,8 @@ export interface SheetState {
   pointerM: Point2 | null;
   live: Live;
   map: FieldMapState;
+  /** What the section goes through: the sensor or section line that was last selected. */
+  sliceThrough: SliceThrough;
 }
 
 /** How near in pixels the pointer has to come to take hold of something. */
@@ -83,6 +86,7 @@ export class SheetStore {
       litId: null,
       pointerM: null,
       live: { kind: "waiting" },
+      sliceThrough: null,
       map: { settings: null, mapped: null, section: null, problem: null },
     };
   }
@@ -105,7 +109,14 @@ export class SheetStore {
     const { session, snap, view, editable } = this.state;
     const changed = change(session, { snap, reachM: reachPx / view.scale, siteEarth: this.siteEarth });
     if (changed === session || (!editable && changed.document !== session.document)) return;
-    this.update({ session: changed });
+    const sliced =
+      changed.selection === session.selection
+        ? undefined
+        : changed.selection.find(({ kind }) => kind === "sensor");
+    this.update({
+      session: changed,
+      ...(sliced?.kind === "sensor" && { sliceThrough: { kind: "sensor", id: sliced.id } }),
+    });
   }
 
   pointer(kind: PointerEventKind, pointM: Point2, modifiers: Modifiers): void {
@@ -130,9 +141,14 @@ export class SheetStore {
     this.act((session) => sessions.select(session, selection));
   }
 
-  /** An edit with its checkpoint. */
-  edit(label: string, change: (document: PlanDocument) => PlanDocument, selection?: Selection): void {
-    this.act((session) => sessions.edit(session, label, change(session.document), selection));
+  /** An edit with its checkpoint; see `sessions.edit` for `joins`. */
+  edit(
+    label: string,
+    change: (document: PlanDocument) => PlanDocument,
+    selection?: Selection,
+    joins?: string,
+  ): void {
+    this.act((session) => sessions.edit(session, label, change(session.document), selection, joins));
   }
 
   undo(): void {

@@ -25,6 +25,8 @@ interface Requests {
   document: PlanDocument;
   level: FieldMapRequest;
   section: FieldMapRequest;
+  /** Where the section's grid begins along its slice. */
+  along0M: number;
 }
 
 /** What to map at this fineness; null while the map is off. */
@@ -36,11 +38,12 @@ function requestsOf(state: SheetState, { points, rows }: { points: number; rows:
   const loadCase = document.loadCases.find(({ id }) => id === settings.loadCaseId);
   const common = { quantity: settings.quantity, loadCaseId: loadCase?.id ?? null, ...(bandHz && { bandHz }) };
   const flat = mapGrid(shownBounds(state.view, state.size), points);
-  const frame = sectionFrame(document, state.session.selection, state.view, state.size);
+  const frame = sectionFrame(document, state.sliceThrough, state.view, state.size);
   const upright = sectionGrid(frame, state.size.width, rows);
   const { columns, stepM } = flat;
   return {
     document,
+    along0M: upright.along0M,
     level: {
       ...common,
       grid: {
@@ -54,8 +57,8 @@ function requestsOf(state: SheetState, { points, rows }: { points: number; rows:
     section: {
       ...common,
       grid: {
-        origin: [upright.x0M, frame.sliceY, upright.z0M],
-        across: [upright.stepM, 0, 0],
+        origin: [...upright.origin, upright.z0M],
+        across: [upright.stepM * frame.slice.along[0], upright.stepM * frame.slice.along[1], 0],
         up: [0, 0, upright.stepM],
         columns: upright.columns,
         rows: upright.rows,
@@ -64,15 +67,23 @@ function requestsOf(state: SheetState, { points, rows }: { points: number; rows:
   };
 }
 
-/** A map as lines are drawn from it; in a section z stands for y. */
+/** A map as lines are drawn from it. */
 function mappedOf({ grid, quantity }: FieldMapRequest, { values, columns, rows }: FieldMap): Mapped {
-  const y0M = grid.up[2] > 0 ? grid.origin[2] : grid.origin[1];
-  return { quantity, grid: { x0M: grid.origin[0], y0M, stepM: grid.across[0], columns, rows, values } };
+  const [x0M, y0M] = grid.origin;
+  return { quantity, grid: { x0M, y0M, stepM: grid.across[0], columns, rows, values } };
+}
+
+/** The same of a section: metres along the slice stand for x, z for y. */
+function sectionOf({ grid, quantity }: FieldMapRequest, along0M: number, map: FieldMap): Mapped {
+  const { values, columns, rows } = map;
+  const [x0M, y0M] = [along0M, grid.origin[2]];
+  return { quantity, grid: { x0M, y0M, stepM: grid.up[2], columns, rows, values } };
 }
 
 /** Screens what is shown and maps the field as they change; the map is coarse while things move and refined at rest. */
 export function useLive(store: SheetStore): void {
   useEffect(() => {
+    const begins = new WeakMap<FieldMapRequest, number>();
     const live = new LiveScreening({
       onResult: (_document, outcome) =>
         store.update({
@@ -93,7 +104,8 @@ export function useLive(store: SheetStore): void {
       onSection: (request, outcome) => {
         const { map } = store.get();
         if (map.settings?.quantity !== request.quantity) return;
-        const section = outcome.kind === "done" ? mappedOf(request, outcome.value) : null;
+        const along0M = begins.get(request) ?? 0;
+        const section = outcome.kind === "done" ? sectionOf(request, along0M, outcome.value) : null;
         store.update({ map: { ...map, section } });
       },
     });
@@ -101,6 +113,10 @@ export function useLive(store: SheetStore): void {
     let mappedFor = "";
     let timer: ReturnType<typeof setTimeout> | undefined;
 
+    const askSection = (shown: PlanDocument, { section, along0M }: Requests) => {
+      begins.set(section, along0M);
+      live.section(shown, section);
+    };
     const ask = () => {
       const state = store.get();
       const shown = shownDocument(state.session);
@@ -115,13 +131,13 @@ export function useLive(store: SheetStore): void {
       }
       mappedFor = key;
       live.map(shown, requests.level);
-      live.section(shown, requests.section);
+      askSection(shown, requests);
       clearTimeout(timer);
       timer = setTimeout(() => {
         const finer = requestsOf(store.get(), fine);
         if (finer === null) return;
         live.map(finer.document, finer.level);
-        live.section(finer.document, finer.section);
+        askSection(finer.document, finer);
       }, restMs);
     };
     ask();

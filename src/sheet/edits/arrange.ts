@@ -3,8 +3,9 @@ import { sameOwner, pathOf, withPath, withVertex, removeVertex } from "./paths";
 import type { Point3 } from "../geometry";
 import { selectedOwners, type SelectedItem, type Selection } from "../selection";
 import { duplicateCircuit } from "./circuits";
+import { duplicateEquipment, updateEquipment } from "./equipment";
 import { duplicateSensor, updateSensor } from "./sensors";
-import { removeCircuitAndEmptyRoute, removeRoute, removeSensors } from "./remove";
+import { removeCircuitAndEmptyRoute, removeEquipment, removeRoute, removeSensors } from "./remove";
 import { tidyPoint } from "./paths";
 
 const shifted = (point: Point3, by: Point3): [number, number, number] =>
@@ -18,6 +19,12 @@ export function moveSelection(document: PlanDocument, selection: Selection, by: 
       moved = updateSensor(moved, item.id, (sensor) => ({
         ...sensor,
         position: shifted(sensor.position, by),
+      }));
+    }
+    if (item.kind === "equipment") {
+      moved = updateEquipment(moved, item.id, (present) => ({
+        ...present,
+        centre: shifted(present.centre, by),
       }));
     }
   }
@@ -52,12 +59,13 @@ export function removeSelection(document: PlanDocument, selection: Selection): P
   );
   return selection.reduce<PlanDocument>((left, item) => {
     if (item.kind === "sensor") return removeSensors(left, [item.id]);
+    if (item.kind === "equipment") return removeEquipment(left, [item.id]);
     if (item.kind === "circuit") return removeCircuitAndEmptyRoute(left, item.id);
     return item.kind === "route" ? removeRoute(left, item.id) : left;
   }, withoutVertices);
 }
 
-/** Copies the selected sensors and circuits; tells what to select afterwards. */
+/** Copies the selected sensors, equipment and circuits; tells what to select afterwards. */
 export function duplicateSelection(
   document: PlanDocument,
   selection: Selection,
@@ -70,6 +78,11 @@ export function duplicateSelection(
       if (copied === null) continue;
       grown = copied.document;
       copies.push({ kind: "sensor", id: copied.sensorId });
+    } else if (item.kind === "equipment") {
+      const copied = duplicateEquipment(grown, item.id);
+      if (copied === null) continue;
+      grown = copied.document;
+      copies.push({ kind: "equipment", id: copied.equipmentId });
     } else if (item.kind === "circuit") {
       const copied = duplicateCircuit(grown, item.id);
       if (copied === null) continue;

@@ -11,21 +11,24 @@ export const renameLoadCase = (document: PlanDocument, id: string, name: string)
   loadCases: document.loadCases.map((loadCase) => (loadCase.id === id ? { ...loadCase, name } : loadCase)),
 });
 
-/** Sets the factor of a circuit in a load case; 1 is the default and is not written. */
+/** Sets the factor of a circuit or equipment in a load case; 1 is the default and is not written. */
 export const setFactor = (
   document: PlanDocument,
   loadCaseId: string,
-  circuitId: string,
+  sourceId: string,
   factor: number,
 ): PlanDocument => ({
   ...document,
   loadCases: document.loadCases.map((loadCase) => {
     if (loadCase.id !== loadCaseId) return loadCase;
-    const others = Object.fromEntries(Object.entries(loadCase.factors).filter(([id]) => id !== circuitId));
-    return { ...loadCase, factors: factor === 1 ? others : { ...others, [circuitId]: factor } };
+    const others = Object.fromEntries(Object.entries(loadCase.factors).filter(([id]) => id !== sourceId));
+    return { ...loadCase, factors: factor === 1 ? others : { ...others, [sourceId]: factor } };
   }),
 });
 
 /** A negative factor reverses DC; an alternating current is turned by its phase. */
-export const mayReverse = (document: PlanDocument, circuitId: string): boolean =>
-  document.circuits.find(({ id }) => id === circuitId)?.supply?.kind === "dc";
+export function mayReverse(document: PlanDocument, sourceId: string): boolean {
+  const item = document.equipment.find(({ id }) => id === sourceId);
+  if (item !== undefined) return item.kind === "dipole" ? item.frequencyHz === 0 : item.supply.kind === "dc";
+  return document.circuits.find(({ id }) => id === sourceId)?.supply?.kind === "dc";
+}

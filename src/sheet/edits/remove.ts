@@ -1,7 +1,13 @@
-import type { PlanDocument } from "~/domain/plan-document/plan-document";
+import type { LoadCase, PlanDocument } from "~/domain/plan-document/plan-document";
 
 const without = <T extends { id: string }>(list: T[], ids: ReadonlySet<string>): T[] =>
   list.filter(({ id }) => !ids.has(id));
+
+const withoutFactors = (loadCases: readonly LoadCase[], ids: ReadonlySet<string>): LoadCase[] =>
+  loadCases.map((loadCase) => ({
+    ...loadCase,
+    factors: Object.fromEntries(Object.entries(loadCase.factors).filter(([id]) => !ids.has(id))),
+  }));
 
 /** Takes circuits out with all that names them: their factors in load cases and their lines of the schedule. */
 export function removeCircuits(document: PlanDocument, circuitIds: readonly string[]): PlanDocument {
@@ -10,10 +16,7 @@ export function removeCircuits(document: PlanDocument, circuitIds: readonly stri
   return {
     ...document,
     circuits: without(document.circuits, ids),
-    loadCases: document.loadCases.map((loadCase) => ({
-      ...loadCase,
-      factors: Object.fromEntries(Object.entries(loadCase.factors).filter(([id]) => !ids.has(id))),
-    })),
+    loadCases: withoutFactors(document.loadCases, ids),
     drawing: {
       ...document.drawing,
       ...(schedule && { schedule: schedule.filter(({ circuitId }) => !ids.has(circuitId)) }),
@@ -45,6 +48,16 @@ export const removeSensors = (document: PlanDocument, sensorIds: readonly string
   ...document,
   sensors: without(document.sensors, new Set(sensorIds)),
 });
+
+/** Takes equipment out with its factors in load cases. */
+export function removeEquipment(document: PlanDocument, equipmentIds: readonly string[]): PlanDocument {
+  const ids = new Set(equipmentIds);
+  return {
+    ...document,
+    equipment: without(document.equipment, ids),
+    loadCases: withoutFactors(document.loadCases, ids),
+  };
+}
 
 export const removeLoadCase = (document: PlanDocument, loadCaseId: string): PlanDocument => ({
   ...document,

@@ -16,13 +16,14 @@ function instructionOf(state: State, count: number): string {
   if (state.kind === "held" && state.moved !== null) return "Release to put it here; Escape puts it back.";
   if (state.kind === "boxing") return "Release to select what lies inside.";
   return count === 0
-    ? "Press on a sensor or a route to select it, or choose a step. Drag over an empty place to select several."
+    ? "Press on a sensor, a route or equipment to select it, or choose a step. Drag over an empty place to select several."
     : "Drag or use the arrow keys to move, Page Up and Page Down for the height, Delete to delete. Ctrl and a press on a route adds a vertex.";
 }
 
 /** Where the held thing lies; null for a whole route, which moves by the grid from where it was taken. */
 function placeOf(document: PlanDocument, item: SelectedItem): Point3 | null {
   if (item.kind === "sensor") return document.sensors.find(({ id }) => id === item.id)?.position ?? null;
+  if (item.kind === "equipment") return document.equipment.find(({ id }) => id === item.id)?.centre ?? null;
   return item.kind === "vertex" ? (pathOf(document, item.owner)?.[item.index] ?? null) : null;
 }
 
@@ -84,7 +85,10 @@ function inBox(document: PlanDocument, a: Point2, b: Point2): SelectedItem[] {
       kind: owner.list === "routes" ? "route" : "circuit",
       id: owner.id,
     }));
-  return [...sensors, ...routes];
+  const equipment = document.equipment
+    .filter(({ centre }) => inside(flatOf(centre)))
+    .map(({ id }): SelectedItem => ({ kind: "equipment", id }));
+  return [...sensors, ...equipment, ...routes];
 }
 
 function press(pointM: Point2, modifiers: Modifiers, around: Surroundings): StepResult {
@@ -159,7 +163,7 @@ function key(state: State, pressed: string, modifiers: Modifiers, around: Surrou
     const stepM = (snap.gridM > 0 ? snap.gridM : nudgeM) * (modifiers.shift ? 10 : modifiers.alt ? 0.1 : 1);
     const by: Point3 = [arrow[0] * stepM, arrow[1] * stepM, arrow[2] * stepM];
     const moving = arrow[2] === 0 ? withRiserEnds(document, selection) : selection;
-    return { kind: "finished", label: "Move", document: moveSelection(document, moving, by) };
+    return { kind: "finished", label: "Move", document: moveSelection(document, moving, by), joins: "nudge" };
   }
   if (pressed === "Delete" || pressed === "Backspace") {
     return { kind: "finished", label: "Delete", document: removeSelection(document, selection), select: [] };

@@ -23,6 +23,7 @@ export function snapToThings(pointM: Point2, modifiers: Modifiers, around: Surro
   const vertices: Point3[] = [
     ...ownedPaths(document).flatMap(({ path }) => path),
     ...document.sensors.map(({ position }) => position),
+    ...document.equipment.map(({ centre }) => centre),
     ...corners,
   ];
   const things = { vertices: snap.vertices, rightAngles: false, gridM: 0 };

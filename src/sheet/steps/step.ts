@@ -10,6 +10,7 @@ export const stepNames = [
   "set-north",
   "trace-route",
   "place-sensor",
+  "place-equipment",
   "measure",
 ] as const;
 export type StepName = (typeof stepNames)[number];
@@ -20,6 +21,7 @@ export const stepTitles: Record<StepName, string> = {
   "set-north": "Set north",
   "trace-route": "Trace route",
   "place-sensor": "Place sensor",
+  "place-equipment": "Place equipment",
   measure: "Measure",
 };
 
@@ -57,7 +59,14 @@ export type Mark =
 /** The one way out of a step, or the step as it goes on. */
 export type StepResult =
   | { kind: "going"; step: Step; select?: Selection }
-  | { kind: "finished"; label: string; document: PlanDocument; select?: Selection }
+  | {
+      kind: "finished";
+      label: string;
+      document: PlanDocument;
+      select?: Selection;
+      /** Edits of one kind that come in a row are one undo: arrow keys, say. */
+      joins?: string;
+    }
   | { kind: "abandoned" };
 
 /**

@@ -1,11 +1,14 @@
 import { useMemo } from "react";
+import type { Equipment } from "~/domain/plan-document/equipment";
 import type { PlanDocument } from "~/domain/plan-document/plan-document";
 import { positionsWorstFirst } from "~/domain/positions";
 import { VERDICTS, type Verdict } from "~/domain/screening-result";
+import { equipmentWords } from "~/sheet/edits/equipment";
 import { circuitsOn, ownedPaths, ownerOfCircuit, sameOwner, type OwnedPath } from "~/sheet/edits/paths";
 import { placeLabels } from "~/sheet/label-places";
-import { selectedOwners } from "~/sheet/selection";
+import { isSelected, selectedOwners } from "~/sheet/selection";
 import { useSelection, useSheet, useShownDocument } from "../store";
+import { EquipmentShape } from "./EquipmentShape";
 import { PathShape, type Carried } from "./PathShape";
 import { radiusPx, SensorShape } from "./SensorShape";
 import { VertexHandles } from "./VertexHandles";
@@ -21,7 +24,9 @@ function carriedBy(document: PlanDocument, { owner }: OwnedPath): Carried {
   }, bare);
 }
 
-/** Routes with what they carry, and sensors with their needles. */
+const equipmentLabel = ({ name, kind }: Equipment): string => `${name} (${equipmentWords[kind]})`;
+
+/** Routes with what they carry, equipment with its axes, and sensors with their needles. */
 export function PlanShapes({ scale, palette }: { scale: number; palette: Palette }) {
   const document = useShownDocument();
   const selection = useSelection();
@@ -40,19 +45,24 @@ export function PlanShapes({ scale, palette }: { scale: number; palette: Palette
     [document],
   );
   const labels = useMemo(() => {
-    const isSelected = (id: string) => selection.some((item) => item.kind === "sensor" && item.id === id);
-    const rank = (id: string): number =>
-      isSelected(id) ? -1 : -VERDICTS.indexOf(verdicts.get(id)?.verdict ?? "within");
-    const things = document.sensors
-      .map(({ id, name, position: [x, y] }) => ({
-        id,
+    const rank = (kind: "sensor" | "equipment", id: string): number =>
+      isSelected(selection, { kind, id }) ? -9 : -VERDICTS.indexOf(verdicts.get(id)?.verdict ?? "within");
+    const things = [
+      ...document.sensors.map(({ id, name, position: [x, y] }) => ({
+        id: `sensor/${id}`,
         text: name,
         at: [x * scale, -y * scale] as const,
-        rank: rank(id),
-      }))
-      .sort((a, b) => a.rank - b.rank);
+        rank: rank("sensor", id),
+      })),
+      ...document.equipment.map((item) => ({
+        id: `equipment/${item.id}`,
+        text: equipmentLabel(item),
+        at: [item.centre[0] * scale, -item.centre[1] * scale] as const,
+        rank: rank("equipment", item.id),
+      })),
+    ].sort((a, b) => a.rank - b.rank);
     return placeLabels(things, { clearPx: radiusPx + 5, linePx: 16, letterPx: 7 });
-  }, [document.sensors, selection, verdicts, scale]);
+  }, [document.sensors, document.equipment, selection, verdicts, scale]);
   const chosen = selectedOwners(document, selection);
   const lit = document.circuits.find(({ id }) => id === litId);
   const litOwner = lit === undefined ? null : ownerOfCircuit(lit);
@@ -80,6 +90,18 @@ export function PlanShapes({ scale, palette }: { scale: number; palette: Palette
             palette={palette}
           />
         ))}
+      {document.equipment.map((item) => (
+        <EquipmentShape
+          key={item.id}
+          item={item}
+          scale={scale}
+          palette={palette}
+          selected={isSelected(selection, { kind: "equipment", id: item.id })}
+          lit={item.id === litId}
+          label={equipmentLabel(item)}
+          labelAt={labels.get(`equipment/${item.id}`) ?? null}
+        />
+      ))}
       {document.sensors.map((sensor) => (
         <SensorShape
           key={sensor.id}
@@ -88,8 +110,8 @@ export function PlanShapes({ scale, palette }: { scale: number; palette: Palette
           budgetUsed={verdicts.get(sensor.id)?.budgetUsed ?? 0}
           scale={scale}
           palette={palette}
-          selected={selection.some((item) => item.kind === "sensor" && item.id === sensor.id)}
-          labelAt={labels.get(sensor.id) ?? null}
+          selected={isSelected(selection, { kind: "sensor", id: sensor.id })}
+          labelAt={labels.get(`sensor/${sensor.id}`) ?? null}
         />
       ))}
     </>

@@ -13,6 +13,7 @@ export function planBounds(document: PlanDocument): Bounds {
     ...(sheet === undefined ? [] : sheetCorners(sheet)),
     ...ownedPaths(document).flatMap(({ path }) => path.map(flatOf)),
     ...document.sensors.map(({ position }) => flatOf(position)),
+    ...document.equipment.map(({ centre }) => flatOf(centre)),
   ];
   return boundsOf(points) ?? emptyRoom;
 }

@@ -15,36 +15,42 @@ interface Props {
   least?: number | undefined;
   above?: number | undefined;
   most?: number | undefined;
+  below?: number | undefined;
+  /** Only whole numbers. */
+  whole?: boolean | undefined;
   hint?: ReactNode;
   disabled?: boolean | undefined;
   placeholder?: string | undefined;
 }
 
 /** What the bounds say, in the unit shown. */
-function boundWords({ least, above, most, perUnit = 1, unit = "" }: Props): string {
+function boundWords({ least, above, most, below, perUnit = 1, unit = "" }: Props): string {
   const words = [
     ...(above !== undefined ? [`above ${numberText(above * perUnit)}`] : []),
     ...(least !== undefined ? [`from ${numberText(least * perUnit)}`] : []),
     ...(most !== undefined ? [`up to ${numberText(most * perUnit)}`] : []),
+    ...(below !== undefined ? [`below ${numberText(below * perUnit)}`] : []),
   ];
   return words.length === 0 ? "" : ` ${words.join(" ")} ${unit}`.trimEnd();
 }
 
 export function NumberField(props: Props) {
-  const { value, onChange, onEmpty, perUnit = 1, least, above, most, ...field } = props;
+  const { value, onChange, onEmpty, perUnit = 1, least, above, most, below, whole = false, ...field } = props;
+  const wanted = `Type a ${whole ? "whole " : ""}number${boundWords(props)}.`;
   const commit = (text: string): string | null => {
     if (text.trim() === "" && onEmpty) {
       onEmpty();
       return null;
     }
     const typed = readNumber(text);
-    if (typed === null) return `Type a number${boundWords(props)}.`;
+    if (typed === null || (whole && !Number.isInteger(typed))) return wanted;
     const si = typed / perUnit;
     const refused =
       (least !== undefined && si < least) ||
       (above !== undefined && si <= above) ||
-      (most !== undefined && si > most);
-    if (refused) return `Type a number${boundWords(props)}.`;
+      (most !== undefined && si > most) ||
+      (below !== undefined && si >= below);
+    if (refused) return wanted;
     onChange(Number(si.toPrecision(12)));
     return null;
   };

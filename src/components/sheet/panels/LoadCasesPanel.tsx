@@ -5,12 +5,12 @@ import { numberText, readNumber } from "~/sheet/read-number";
 import { CellInput } from "../tables/CellInput";
 import { useDocument, useEditable, useSheetStore } from "../store";
 
-/** Factors of each circuit in each load case; each limit is judged in every one of them. */
+/** Factors of each circuit and each piece of equipment in each load case; each limit is judged in every one of them. */
 export function LoadCasesPanel() {
   const store = useSheetStore();
   const document = useDocument();
   const disabled = !useEditable();
-  const { loadCases, circuits } = document;
+  const { loadCases, circuits, equipment } = document;
   return (
     <div className="grid gap-3">
       {loadCases.length === 0 ? (
@@ -18,10 +18,10 @@ export function LoadCasesPanel() {
       ) : (
         <div className="table-scroll">
           <table className="table">
-            <caption className="sr-only">Factor of each circuit in each load case</caption>
+            <caption className="sr-only">Factor of each source in each load case</caption>
             <thead>
               <tr>
-                <th scope="col">Circuit</th>
+                <th scope="col">Source</th>
                 {loadCases.map(({ id, name }) => (
                   <th key={id} scope="col">
                     <CellInput
@@ -49,23 +49,23 @@ export function LoadCasesPanel() {
               </tr>
             </thead>
             <tbody>
-              {circuits.map((circuit) => (
-                <tr key={circuit.id}>
-                  <th scope="row">{circuit.name}</th>
+              {[...circuits, ...equipment].map((source) => (
+                <tr key={source.id}>
+                  <th scope="row">{source.name}</th>
                   {loadCases.map((loadCase) => (
                     <td key={loadCase.id}>
                       <CellInput
-                        label={`Factor of ${circuit.name} in ${loadCase.name}`}
-                        value={numberText(loadCase.factors[circuit.id] ?? 1)}
+                        label={`Factor of ${source.name} in ${loadCase.name}`}
+                        value={numberText(loadCase.factors[source.id] ?? 1)}
                         numeric
                         disabled={disabled}
                         onCommit={(text) => {
                           const factor = readNumber(text);
                           if (factor === null || Math.abs(factor) > 1e6) return "Type a factor, such as 0.7.";
-                          if (factor < 0 && !mayReverse(document, circuit.id))
+                          if (factor < 0 && !mayReverse(document, source.id))
                             return "Only DC can be reversed.";
-                          store.edit(`Factor of ${circuit.name}`, (whole) =>
-                            setFactor(whole, loadCase.id, circuit.id, factor),
+                          store.edit(`Factor of ${source.name}`, (whole) =>
+                            setFactor(whole, loadCase.id, source.id, factor),
                           );
                           return null;
                         }}

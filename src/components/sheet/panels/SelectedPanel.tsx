@@ -6,6 +6,7 @@ import type { PlanDocument } from "~/domain/plan-document/plan-document";
 import { itemOfPath, type SelectedItem } from "~/sheet/selection";
 import { CommitField } from "../inputs/CommitField";
 import { useDocument, useEditable, useSelection, useSheetStore } from "../store";
+import { EquipmentPanel } from "../equipment/EquipmentPanel";
 import { CircuitPanel } from "./CircuitPanel";
 import { SensorPanel } from "./SensorPanel";
 import { Vertices } from "./VertexList";
@@ -24,6 +25,10 @@ export function SelectedPanel() {
   if (item.kind === "sensor") {
     const sensor = document.sensors.find(({ id }) => id === item.id);
     return sensor === undefined ? null : <SensorPanel key={sensor.id} sensor={sensor} />;
+  }
+  if (item.kind === "equipment") {
+    const found = document.equipment.find(({ id }) => id === item.id);
+    return found === undefined ? null : <EquipmentPanel key={found.id} item={found} />;
   }
   if (item.kind === "circuit") {
     const circuit = document.circuits.find(({ id }) => id === item.id);

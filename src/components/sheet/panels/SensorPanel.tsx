@@ -10,9 +10,8 @@ import { CommitField } from "../inputs/CommitField";
 import { NumberField } from "../inputs/NumberField";
 import { useDocument, useEditable, useSheetStore } from "../store";
 import { AxisFields } from "./AxisFields";
+import { PositionFields } from "./PositionFields";
 import { LimitFields } from "./LimitFields";
-
-const axes = ["x", "y", "z"] as const;
 
 /** The catalogue's kind whose limits the sensor has; "" where they are its own. */
 function kindIdOf(sensor: Sensor): string {
@@ -56,26 +55,12 @@ export function SensorPanel({ sensor }: { sensor: Sensor }) {
           if (kind !== undefined) change("Kind", (present) => ({ ...present, limits: limitsOfKind(kind) }));
         }}
       />
-      <fieldset className="grid grid-cols-3 gap-3">
-        <legend className="mb-1 text-sm font-semibold">Position</legend>
-        {axes.map((axis, at) => (
-          <NumberField
-            key={axis}
-            label={axis === "z" ? "z, height" : axis}
-            unit="m"
-            least={-100_000}
-            most={100_000}
-            value={sensor.position[at] ?? 0}
-            disabled={disabled}
-            onChange={(valueM) =>
-              change("Position", (present) => ({
-                ...present,
-                position: present.position.map((old, i) => (i === at ? valueM : old)) as Sensor["position"],
-              }))
-            }
-          />
-        ))}
-      </fieldset>
+      <PositionFields
+        legend="Position"
+        position={sensor.position}
+        disabled={disabled}
+        onChange={(position) => change("Position", (present) => ({ ...present, position }))}
+      />
       <NumberField
         label="Position tolerance"
         unit="mm"

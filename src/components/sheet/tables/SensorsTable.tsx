@@ -7,17 +7,15 @@ import { freeName } from "~/sheet/edits/ids";
 import { removeSensors } from "~/sheet/edits/remove";
 import { limitsOfKind, limitTitles } from "~/sheet/edits/sensor-kinds";
 import { addSensor, updateSensor } from "~/sheet/edits/sensors";
-import { readNumber } from "~/sheet/read-number";
 import { useDocument, useEditable, useSheetStore } from "../store";
 import { CellInput } from "./CellInput";
 import { CellSelect } from "./CellSelect";
+import { PositionCells, positionColumns } from "./PositionCells";
 
 const limitText = (limit: Limit): string => {
   if (limit.kind === "heading") return angleText(limit.limitDeg);
   return limit.kind === "gradient" ? gradientText(limit.limitTPerM) : fieldText(limit.limitT);
 };
-
-const axes = ["x", "y", "z"] as const;
 
 /** Height that a sensor added here begins with. */
 const usualHeightM = 1.1;
@@ -46,9 +44,9 @@ export function SensorsTable() {
             <thead>
               <tr>
                 <th scope="col">Name</th>
-                {axes.map((axis) => (
-                  <th key={axis} scope="col">
-                    {axis}, m
+                {positionColumns.map((column) => (
+                  <th key={column} scope="col">
+                    {column}
                   </th>
                 ))}
                 <th scope="col">Limits</th>
@@ -104,25 +102,12 @@ function Row({ sensor }: { sensor: Sensor }) {
           }}
         />
       </th>
-      {axes.map((axis, at) => (
-        <td key={axis}>
-          <CellInput
-            label={`${axis} of ${name}, m`}
-            value={String(sensor.position[at])}
-            numeric
-            disabled={disabled}
-            onCommit={(text) => {
-              const valueM = readNumber(text);
-              if (valueM === null || Math.abs(valueM) > 100_000) return "Type metres.";
-              change("Position", (present) => ({
-                ...present,
-                position: present.position.map((old, i) => (i === at ? valueM : old)) as Sensor["position"],
-              }));
-              return null;
-            }}
-          />
-        </td>
-      ))}
+      <PositionCells
+        name={name}
+        position={sensor.position}
+        disabled={disabled}
+        onChange={(position) => change("Position", (present) => ({ ...present, position }))}
+      />
       <td>{sensor.limits.map((limit) => `${limitTitles[limit.kind]} ${limitText(limit)}`).join(", ")}</td>
       {!disabled && (
         <td className="whitespace-nowrap">

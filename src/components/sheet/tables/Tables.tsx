@@ -1,4 +1,5 @@
 import { CircuitsTable } from "./CircuitsTable";
+import { EquipmentTable } from "./EquipmentTable";
 import { RoutesTable } from "./RoutesTable";
 import { SensorsTable } from "./SensorsTable";
 import { LoadCasesPanel } from "../panels/LoadCasesPanel";
@@ -29,6 +30,12 @@ export function Tables() {
           Sensors
         </h2>
         <SensorsTable />
+      </section>
+      <section aria-labelledby="equipment-title">
+        <h2 id="equipment-title" className="mb-2">
+          Equipment
+        </h2>
+        <EquipmentTable />
       </section>
       <section aria-labelledby="load-cases-title">
         <h2 id="load-cases-title" className="mb-2">
