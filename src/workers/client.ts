@@ -1,3 +1,4 @@
+import type { Clearing, ClearingRequest } from "~/domain/clearing";
 import type { PlanDocument } from "~/domain/plan-document/plan-document";
 import type { ScreeningResult } from "~/domain/screening-result";
 import {
@@ -17,7 +18,7 @@ export interface WorkerPort {
   close(): void;
 }
 
-/** Screening and maps as promises; they reject with the signal's reason, or with ScreeningFailedError. */
+/** Screening, maps and what would clear as promises; they reject with the signal's reason, or with ScreeningFailedError. */
 export interface ScreeningClient {
   screen(document: PlanDocument, signal?: AbortSignal, onProgress?: OnProgress): Promise<ScreeningResult>;
   map(
@@ -26,6 +27,13 @@ export interface ScreeningClient {
     signal?: AbortSignal,
     onProgress?: OnProgress,
   ): Promise<FieldMap>;
+  /** What would clear flagged sensors. */
+  clearing(
+    document: PlanDocument,
+    request: ClearingRequest,
+    signal?: AbortSignal,
+    onProgress?: OnProgress,
+  ): Promise<Clearing>;
   dispose(): void;
 }
 
@@ -37,7 +45,8 @@ interface Pending {
 
 type Ask =
   | { type: "screen"; document: PlanDocument }
-  | { type: "map"; document: PlanDocument; request: FieldMapRequest };
+  | { type: "map"; document: PlanDocument; request: FieldMapRequest }
+  | { type: "clearing"; document: PlanDocument; request: ClearingRequest };
 
 /** A client that speaks the protocol over a port. */
 export function clientOver(port: WorkerPort): ScreeningClient {
@@ -97,6 +106,11 @@ export function clientOver(port: WorkerPort): ScreeningClient {
       const response = await ask({ type: "map", document, request }, signal, onProgress);
       if (response.type !== "mapped") throw new ScreeningFailedError("the worker answered something else");
       return response.map;
+    },
+    async clearing(document, request, signal, onProgress) {
+      const response = await ask({ type: "clearing", document, request }, signal, onProgress);
+      if (response.type !== "cleared") throw new ScreeningFailedError("the worker answered something else");
+      return response.clearing;
     },
     dispose() {
       fail(new ScreeningFailedError("the screening worker was closed"));

@@ -1,7 +1,9 @@
 import { MessageChannel } from "node:worker_threads";
 import { afterEach, describe, expect, it } from "vitest";
+import { CLEARING_PARTS } from "~/domain/clearing";
 import { emptyPlanDocument, type PlanDocument } from "~/domain/plan-document/plan-document";
 import { parsePlanDocument } from "~/domain/plan-document/parse";
+import { clearing } from "~/screening/clearing/clearing";
 import { fieldMap, levelGrid, type FieldMapRequest } from "~/screening/field-map";
 import { screen } from "~/screening/screen";
 import { clientOver, type ScreeningClient } from "./client";
@@ -65,6 +67,14 @@ describe("screening behind a message port", () => {
     const document = strungPlan(3);
     expect(await client.screen(document)).toEqual(screen(document));
     expect(await client.map(document, mapRequest(5))).toEqual(fieldMap(document, mapRequest(5)));
+    const request = { sensorIds: null, parts: [...CLEARING_PARTS] };
+    const sensors = document.sensors.map((sensor) => ({
+      ...sensor,
+      limits: [{ id: "1", kind: "static" as const, limitT: 1e-8 }],
+    }));
+    const cleared = await client.clearing({ ...document, sensors }, request);
+    expect(cleared.sensors).toHaveLength(3);
+    expect(cleared).toEqual(clearing({ ...document, sensors }, request));
   });
 
   it("tells progress and hears a cancel while it works, then goes on with the next job", async () => {

@@ -1,3 +1,4 @@
+import { clearingSteps } from "~/screening/clearing/clearing";
 import { fieldMapSteps } from "~/screening/field-map";
 import { RefusedDocumentError } from "~/screening/refusal";
 import { screenSteps } from "~/screening/screen";
@@ -9,8 +10,14 @@ export type Job = Exclude<WorkerRequest, { type: "cancel" }>;
 /** A job in steps; its outcome is its last answer. Failures are thrown and made an answer by `failure`. */
 export function* jobSteps(job: Job): Steps<WorkerResponse> {
   const { id } = job;
-  if (job.type === "screen") return { type: "screened", id, result: yield* screenSteps(job.document) };
-  return { type: "mapped", id, map: yield* fieldMapSteps(job.document, job.request) };
+  switch (job.type) {
+    case "screen":
+      return { type: "screened", id, result: yield* screenSteps(job.document) };
+    case "map":
+      return { type: "mapped", id, map: yield* fieldMapSteps(job.document, job.request) };
+    case "clearing":
+      return { type: "cleared", id, clearing: yield* clearingSteps(job.document, job.request) };
+  }
 }
 
 export function failure(id: number, error: unknown): WorkerResponse {

@@ -1,5 +1,6 @@
 import { fileURLToPath } from "node:url";
 import { Piscina } from "piscina";
+import type { Clearing, ClearingRequest } from "~/domain/clearing";
 import type { PlanDocument } from "~/domain/plan-document/plan-document";
 import type { ScreeningResult } from "~/domain/screening-result";
 import type { Job } from "./jobs";
@@ -10,6 +11,7 @@ export interface ScreeningPool {
   /** Rejects with ScreeningFailedError; on abort the thread is ended and an AbortError comes back. */
   screen(document: PlanDocument, signal?: AbortSignal): Promise<ScreeningResult>;
   map(document: PlanDocument, request: FieldMapRequest, signal?: AbortSignal): Promise<FieldMap>;
+  clearing(document: PlanDocument, request: ClearingRequest, signal?: AbortSignal): Promise<Clearing>;
   /** Has a document's text read and worked on in the thread. Rejects on abort only; the answer says what was refused. */
   text(job: TextJob, signal?: AbortSignal): Promise<TextAnswer>;
   close(): Promise<void>;
@@ -45,6 +47,11 @@ export function createScreeningPool(
       const response = await run({ type: "map", id: 0, document, request }, signal);
       if (response.type !== "mapped") throw new ScreeningFailedError("the worker answered something else");
       return response.map;
+    },
+    async clearing(document, request, signal) {
+      const response = await run({ type: "clearing", id: 0, document, request }, signal);
+      if (response.type !== "cleared") throw new ScreeningFailedError("the worker answered something else");
+      return response.clearing;
     },
     text: async (job, signal) => (await pool.run(job, signal ? { signal } : {})) as TextAnswer,
     close: () => pool.close(),

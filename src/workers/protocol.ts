@@ -1,3 +1,4 @@
+import type { Clearing, ClearingRequest } from "~/domain/clearing";
 import type { DocumentFault } from "~/domain/plan-document/parse";
 import type { PlanDocument } from "~/domain/plan-document/plan-document";
 import type { ScreeningResult } from "~/domain/screening-result";
@@ -7,6 +8,7 @@ import type { FieldMap, FieldMapRequest } from "~/screening/field-map";
 export type WorkerRequest =
   | { type: "screen"; id: number; document: PlanDocument }
   | { type: "map"; id: number; document: PlanDocument; request: FieldMapRequest }
+  | { type: "clearing"; id: number; document: PlanDocument; request: ClearingRequest }
   | { type: "cancel"; id: number };
 
 /** What it answers: progress any number of times, then one of done or failed; nothing more after a cancel. */
@@ -14,6 +16,7 @@ export type WorkerResponse =
   | { type: "progress"; id: number; done: number; total: number }
   | { type: "screened"; id: number; result: ScreeningResult }
   | { type: "mapped"; id: number; map: FieldMap }
+  | { type: "cleared"; id: number; clearing: Clearing }
   | { type: "failed"; id: number; message: string; faults: DocumentFault[] };
 
 /** Told how many of how many sensors or rows are done. */

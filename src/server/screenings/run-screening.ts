@@ -1,6 +1,7 @@
 import { type Fault, Refusal } from "~/domain/errors";
 import type { ScreenedText, TextAnswer, TextJob } from "~/workers/text-protocol";
 import { screeningPool } from "./pool";
+import { withinLimit } from "./within-limit";
 
 /** Longest that a screening may take, waiting for a free worker included. */
 export const screeningLimitMs = 30_000;
@@ -39,23 +40,9 @@ export async function runScreening(
   }
 }
 
-/** @throws Refusal screening.timed-out; service.unavailable once `signal` is aborted */
-async function inPool(job: TextJob, signal: AbortSignal | undefined, limitMs: number): Promise<TextAnswer> {
-  const limit = AbortSignal.timeout(limitMs);
-  try {
-    const ending = signal === undefined ? limit : AbortSignal.any([signal, limit]);
-    return await screeningPool().text(job, ending);
-  } catch (error) {
-    if (signal?.aborted)
-      throw new Refusal(
-        "service.unavailable",
-        "The request was given up before the screening was finished. Nothing was stored.",
-      );
-    if (limit.aborted)
-      throw new Refusal(
-        "screening.timed-out",
-        `The screening took longer than ${String(limitMs / 1000)} s and was stopped; nothing was stored. Screen fewer sensors at a time, or draw paths with fewer points.`,
-      );
-    throw error;
-  }
-}
+const inPool = (job: TextJob, signal: AbortSignal | undefined, limitMs: number): Promise<TextAnswer> =>
+  withinLimit((ending) => screeningPool().text(job, ending), signal, {
+    limitMs,
+    givenUp: "The request was given up before the screening was finished. Nothing was stored.",
+    tooLong: `The screening took longer than ${String(limitMs / 1000)} s and was stopped; nothing was stored. Screen fewer sensors at a time, or draw paths with fewer points.`,
+  });
