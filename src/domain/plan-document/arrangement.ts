@@ -1,11 +1,11 @@
 import * as z from "zod";
-import { coordinateM, finite, lengthM } from "./quantities";
+import { angleDeg, coordinateM, lengthM, magnitude } from "./quantities";
 
 /** A permutation of the phases over the slots a, b, c: "bca" puts b in a's slot. */
 export const phaseOrder = z.enum(["abc", "acb", "bac", "bca", "cab", "cba"]);
 export const carrier = z.enum(["go", "return", "a", "b", "c", "n"]);
 
-const rollDeg = finite.default(0);
+const rollDeg = angleDeg.default(0);
 const sets = { sets: z.int().min(1).max(100), pitchM: lengthM };
 
 /** Copies of an arrangement without phases, side by side along u before the turn, each carrying 1/sets. */
@@ -29,7 +29,7 @@ const phased = { spacingM: lengthM, rollDeg, parallel: phasedParallel };
 const customConductor = z.strictObject({
   offsetM: z.tuple([coordinateM, coordinateM]),
   of: carrier,
-  fraction: z.number().min(0).max(1),
+  fraction: magnitude.min(0).max(1),
 });
 
 /**

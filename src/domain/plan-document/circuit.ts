@@ -2,20 +2,24 @@ import * as z from "zod";
 import { arrangement } from "./arrangement";
 import { arrangementFaults } from "./arrangement-fits";
 import {
-  finite,
+  angleDeg,
   identifier,
   lengthM,
   name,
   percent,
   planPoint,
   point,
+  shieldingFactor,
   signedCurrentA,
   toleranceM,
 } from "./quantities";
 import { supply } from "./supply";
 
 /** A centre line, metres; at least two points. */
-export const path = z.array(point).min(2, "a path has at least two points").max(20_000);
+export const path = z
+  .array(point)
+  .min(2, "a path has at least two points")
+  .max(20_000, "a path has at most 20 000 points");
 
 export const route = z.strictObject({ id: identifier, name, path });
 
@@ -49,9 +53,9 @@ export const circuit = z
     currentBasis: currentBasis.default("load-list"),
     loadGroup: identifier.nullable().default(null),
     strayCurrentA: signedCurrentA.nullable().default(null),
-    strayAngleDeg: finite.default(0),
+    strayAngleDeg: angleDeg.default(0),
     strayToleranceA: signedCurrentA.nonnegative().nullable().default(null),
-    shieldingFactor: z.number().nonnegative().max(1000).default(1),
+    shieldingFactor: shieldingFactor.default(1),
     currentTolerancePercent: percent.nullable().default(null),
     spacingTolerancePercent: percent.default(0),
     positionToleranceM: toleranceM.default(0),

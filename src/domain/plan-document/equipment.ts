@@ -1,5 +1,5 @@
 import * as z from "zod";
-import { direction, identifier, lengthM, name, percent, point } from "./quantities";
+import { direction, fieldT, identifier, lengthM, name, percent, point, shieldingFactor } from "./quantities";
 import { singleSupply } from "./supply";
 
 const common = {
@@ -8,7 +8,7 @@ const common = {
   source: identifier.nullable().default(null),
   centre: point,
   tolerancePercent: percent.default(0),
-  shieldingFactor: z.number().nonnegative().max(1000).default(1),
+  shieldingFactor: shieldingFactor.default(1),
 };
 
 const turns = z.int().min(1).max(10_000);
@@ -42,7 +42,7 @@ const toroid = z
 const dipole = z.strictObject({
   ...common,
   kind: z.literal("dipole"),
-  reading: z.strictObject({ distanceM: lengthM, fieldT: z.number().nonnegative().max(100) }),
+  reading: z.strictObject({ distanceM: lengthM, fieldT: fieldT.max(100) }),
   frequencyHz: z.number().nonnegative().max(1e9),
   direction: direction.nullable(),
 });

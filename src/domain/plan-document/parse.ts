@@ -1,5 +1,10 @@
 import type * as z from "zod";
-import { planDocumentSchema, type PlanDocument } from "./plan-document";
+import { circuit, route } from "./circuit";
+import { equipment } from "./equipment";
+import { FaultList } from "./faults";
+import { loadCase, planDocumentSchema, type PlanDocument } from "./plan-document";
+import { sensor } from "./sensor";
+import { sizeOf } from "./size";
 
 /** One thing wrong with a document: where (`circuits[2].supply.currentA`) and what to do. */
 export interface DocumentFault {
@@ -10,40 +15,51 @@ export interface DocumentFault {
 export type ParsedPlanDocument =
   { ok: true; document: PlanDocument } | { ok: false; faults: DocumentFault[] };
 
-/** Faults listed of one document; a flood says no more than its beginning. */
-const MAX_FAULTS = 500;
+/** Above this many values a document is judged entry by entry first: each wrong value costs a fault's memory. */
+const VALUES_AT_ONCE = 200_000;
 
-/** Judges JSON from outside. Never throws; lists every fault with its path, keys that nothing reads among them. */
+const entrySchemas: Readonly<Record<string, z.ZodType>> = {
+  routes: route,
+  circuits: circuit,
+  equipment,
+  loadCases: loadCase,
+  sensors: sensor,
+};
+
+/**
+ * Judges JSON from outside. Never throws, and takes bounded time and memory whatever it is given; lists every fault with its
+ * path, keys that nothing reads among them, as far as `MAX_FAULTS`, and says how many more there are.
+ */
 export function parsePlanDocument(json: unknown): ParsedPlanDocument {
+  const { faults: tooMuch, values } = sizeOf(json);
+  if (tooMuch.length > 0) return { ok: false, faults: tooMuch };
+  if (values > VALUES_AT_ONCE) {
+    const faults = entryFaults(json);
+    if (!faults.isEmpty) return { ok: false, faults: faults.faults };
+  }
   const parsed = planDocumentSchema.safeParse(json);
   if (parsed.success) return { ok: true, document: parsed.data };
-  return { ok: false, faults: parsed.error.issues.flatMap(faultsOf).slice(0, MAX_FAULTS) };
+  const faults = new FaultList();
+  faults.add(parsed.error.issues);
+  return { ok: false, faults: faults.faults };
 }
 
-/** A path as people and jq read it: `circuits[2].supply.currentA`; the document itself is `document`. */
-export function pathText(path: readonly PropertyKey[]): string {
-  const text = path.reduce<string>((before, key) => {
-    if (typeof key === "number") return `${before}[${key}]`;
-    const word = String(key);
-    if (/^[A-Za-z_$][\w$-]*$/.test(word)) return before === "" ? word : `${before}.${word}`;
-    return `${before}[${JSON.stringify(word)}]`;
-  }, "");
-  return text === "" ? "document" : text;
-}
-
-function faultsOf(issue: z.core.$ZodIssue): DocumentFault[] {
-  if (issue.code === "unrecognized_keys") {
-    return issue.keys.map((key) => ({
-      path: pathText([...issue.path, key]),
-      message: "unknown key: nothing reads it, so it is refused; remove it or check its spelling",
-    }));
+/** Faults inside the entries of the plan's lists, and of what stands beside them, each judged on its own. */
+function entryFaults(json: unknown): FaultList {
+  const faults = new FaultList();
+  if (typeof json !== "object" || json === null || Array.isArray(json)) return faults;
+  const beside: Record<string, unknown> = { ...json };
+  for (const [list, schema] of Object.entries(entrySchemas)) {
+    const entries = beside[list];
+    if (!Array.isArray(entries)) continue;
+    beside[list] = [];
+    for (const [index, entry] of entries.entries()) {
+      const { error } = schema.safeParse(entry);
+      if (error) faults.add(error.issues, [list, index]);
+      if (faults.isFlood) return faults;
+    }
   }
-  if (issue.code === "invalid_union" && issue.errors.length > 0) {
-    const nested = issue.errors.map((errors) => errors.map((error) => error.message).join(", "));
-    return [{ path: pathText(issue.path), message: `fits no form: ${nested.join("; or ")}` }];
-  }
-  if (issue.code === "invalid_key") {
-    return [{ path: pathText(issue.path), message: issue.issues.map((inner) => inner.message).join(", ") }];
-  }
-  return [{ path: pathText(issue.path), message: issue.message }];
+  const { error } = planDocumentSchema.safeParse(beside);
+  if (error) faults.add(error.issues);
+  return faults;
 }

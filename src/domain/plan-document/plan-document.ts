@@ -3,17 +3,19 @@ import { circuit, route } from "./circuit";
 import { drawing } from "./drawing";
 import { earthField } from "./earth-field";
 import { equipment } from "./equipment";
-import { finite, identifier, name } from "./quantities";
+import { loadFaults } from "./load";
+import { finite, identifier, magnitude, name } from "./quantities";
 import { referenceFaults } from "./references";
 import { sensor } from "./sensor";
 
 export const MAX_CIRCUITS = 5000;
 export const MAX_SENSORS = 5000;
+export const MAX_LOAD_CASES = 100;
 
-const loadCase = z.strictObject({
+export const loadCase = z.strictObject({
   id: identifier,
   name,
-  factors: z.record(identifier, z.number().min(-1e6).max(1e6)).default({}),
+  factors: z.record(identifier, magnitude.min(-1e6).max(1e6)).default({}),
 });
 
 /** The plan document: all that a screening needs. Metres, degrees, amperes (rms for AC), tesla. */
@@ -25,15 +27,18 @@ export const planDocumentSchema = z
     frame: z.strictObject({ northBearingDeg: finite.min(-3600).max(3600) }),
     earthField: earthField.nullable().default(null),
     unknownPhase: z.enum(["worst-case", "typical"]).default("worst-case"),
-    routes: z.array(route).max(MAX_CIRCUITS).default([]),
+    routes: z.array(route).max(MAX_CIRCUITS, `at most ${MAX_CIRCUITS} routes`).default([]),
     circuits: z.array(circuit).max(MAX_CIRCUITS, `at most ${MAX_CIRCUITS} circuits`),
-    equipment: z.array(equipment).max(MAX_CIRCUITS).default([]),
-    loadCases: z.array(loadCase).max(100).default([]),
+    equipment: z
+      .array(equipment)
+      .max(MAX_CIRCUITS, `at most ${MAX_CIRCUITS} pieces of equipment`)
+      .default([]),
+    loadCases: z.array(loadCase).max(MAX_LOAD_CASES, `at most ${MAX_LOAD_CASES} load cases`).default([]),
     sensors: z.array(sensor).max(MAX_SENSORS, `at most ${MAX_SENSORS} sensors`),
     drawing: drawing.default({}),
   })
   .superRefine((document, context) => {
-    for (const { path, message } of referenceFaults(document)) {
+    for (const { path, message } of [...referenceFaults(document), ...loadFaults(document)]) {
       context.addIssue({ code: "custom", path, message });
     }
   });

@@ -10,18 +10,42 @@ export const coordinateM = z
   .number()
   .min(-COORDINATE_LIMIT_M, "coordinates lie within ±100 km")
   .max(COORDINATE_LIMIT_M, "coordinates lie within ±100 km");
-export const lengthM = z.number().positive().max(COORDINATE_LIMIT_M, "lengths are at most 100 km");
-export const toleranceM = z.number().nonnegative().max(COORDINATE_LIMIT_M, "lengths are at most 100 km");
-export const signedCurrentA = z
+export const lengthM = z
   .number()
+  .positive()
+  .min(1e-6, "lengths are at least 1 µm")
+  .max(COORDINATE_LIMIT_M, "lengths are at most 100 km");
+export const toleranceM = z.number().nonnegative().max(COORDINATE_LIMIT_M, "lengths are at most 100 km");
+/** What is smaller is nought: products of it leave the range in which squares can be told from nought, and rounding leaves such. */
+const LEAST = 1e-15;
+const LEAST_FIELD_T = 1e-24;
+const noughtBelow = (least: number) => (value: number) => (Math.abs(value) < least ? 0 : value);
+
+/** A factor, share or current. */
+export const magnitude = z.number().overwrite(noughtBelow(LEAST));
+export const signedCurrentA = magnitude
   .min(-CURRENT_LIMIT_A, "currents lie within ±1 MA")
   .max(CURRENT_LIMIT_A, "currents lie within ±1 MA");
-export const rmsCurrentA = z
-  .number()
+export const rmsCurrentA = magnitude
   .nonnegative("an rms current has no sign; turn it with phaseDeg: 180")
   .max(CURRENT_LIMIT_A, "currents lie within ±1 MA");
-export const percent = z.number().nonnegative().max(1000);
-export const frequencyHz = z.number().positive().max(1e9);
+export const percent = magnitude.nonnegative().max(1000);
+export const shieldingFactor = magnitude.nonnegative().max(1000);
+export const frequencyHz = z
+  .number()
+  .positive()
+  .min(1e-6, "frequencies are at least 1 µHz")
+  .max(1e9, "frequencies are at most 1 GHz");
+export const angleDeg = z
+  .number()
+  .min(-1e6, "angles lie within ±1 000 000°")
+  .max(1e6, "angles lie within ±1 000 000°");
+/** Magnitude of a flux density, tesla. */
+export const fieldT = z
+  .number()
+  .overwrite(noughtBelow(LEAST_FIELD_T))
+  .nonnegative()
+  .max(1000, "fields are at most 1000 T");
 
 /** [x, y, z] in the plan frame, metres. */
 export const point = z.tuple([coordinateM, coordinateM, coordinateM]);

@@ -1,8 +1,12 @@
 import * as z from "zod";
-import { direction, finite, frequencyHz, identifier, name, point, toleranceM } from "./quantities";
+import { direction, fieldT, frequencyHz, identifier, name, point, toleranceM } from "./quantities";
 
 const limitId = identifier.optional();
-const limitT = z.number().positive("a limit is above nought").max(1e6);
+const limitT = z
+  .number()
+  .positive("a limit is above nought")
+  .min(1e-18, "a limit is at least 1 aT, aT/m or 1e-18°")
+  .max(1e6);
 
 const bandHz = z
   .tuple([z.number().nonnegative(), z.number().positive()])
@@ -24,17 +28,23 @@ export const limit = z.discriminatedUnion("kind", [
   z.strictObject({ id: limitId, kind: z.literal("range"), limitT }),
 ]);
 
-const background = z
-  .strictObject({
-    staticT: z.union([z.tuple([finite, finite, finite]), z.number().nonnegative()]).optional(),
-    alternating: z
-      .array(z.strictObject({ frequencyHz, rmsT: z.number().nonnegative() }))
-      .max(100)
-      .default([]),
-    expandedUncertaintyT: z.number().nonnegative().default(0),
-    note: z.string().max(2000).default(""),
-  })
-  .transform((value) => ({ ...value, staticT: value.staticT ?? null }));
+const fieldComponentT = z
+  .number()
+  .min(-1000, "fields are at most 1000 T")
+  .max(1000, "fields are at most 1000 T");
+
+const background = z.strictObject({
+  staticT: z
+    .union([z.tuple([fieldComponentT, fieldComponentT, fieldComponentT]), fieldT])
+    .nullable()
+    .default(null),
+  alternating: z
+    .array(z.strictObject({ frequencyHz, rmsT: fieldT }))
+    .max(100, "at most 100 frequencies")
+    .default([]),
+  expandedUncertaintyT: fieldT.default(0),
+  note: z.string().max(2000).default(""),
+});
 
 export const sensor = z
   .strictObject({
@@ -47,7 +57,7 @@ export const sensor = z
     limits: z
       .array(limit)
       .min(1, "a sensor has at least one limit")
-      .max(50)
+      .max(50, "at most 50 limits")
       .transform((limits) => limits.map((entry, index) => ({ ...entry, id: entry.id ?? String(index + 1) }))),
   })
   .superRefine((value, context) => {

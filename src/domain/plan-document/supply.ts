@@ -1,11 +1,11 @@
 import * as z from "zod";
-import { finite, frequencyHz, percent, rmsCurrentA, signedCurrentA } from "./quantities";
+import { angleDeg, frequencyHz, percent, rmsCurrentA, signedCurrentA } from "./quantities";
 
-const harmonic = z.strictObject({ order: z.int().min(2).max(1000), percent, angleDeg: finite.default(0) });
+const harmonic = z.strictObject({ order: z.int().min(2).max(1000), percent, angleDeg: angleDeg.default(0) });
 
 const harmonics = z
   .array(harmonic)
-  .max(200)
+  .max(200, "at most 200 harmonics")
   .default([])
   .superRefine((list, context) => {
     list.forEach(({ order }, index) => {
@@ -19,8 +19,8 @@ const harmonics = z
     });
   });
 
-const alternating = { frequencyHz, phaseDeg: finite.default(0), harmonics };
-const phase = z.strictObject({ currentA: rmsCurrentA, angleDeg: finite });
+const alternating = { frequencyHz, phaseDeg: angleDeg.default(0), harmonics };
+const phase = z.strictObject({ currentA: rmsCurrentA, angleDeg });
 
 const ac3 = z
   .strictObject({
