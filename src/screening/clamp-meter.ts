@@ -1,8 +1,10 @@
 import type { PlanDocument } from "~/domain/plan-document/plan-document";
 import { resolveDefaults } from "~/domain/plan-document/resolved";
 import { MU_0 } from "~/domain/units";
-import { circulation, gaussLegendre, linkedCirculation } from "~/field/circulation";
-import { add, distance, scale, type Vector } from "~/field/vector";
+import { linkedCirculation } from "~/field/circulation";
+import { along, distance, dot, subtract, type Vector } from "~/field/vector";
+import { loopFaults } from "./checks/loop-clearance";
+import { turnCentres } from "./compile-equipment";
 import { compilePlan, type CompiledPlan } from "./compile";
 import { caseFactors } from "./load-cases";
 import { RefusedDocumentError } from "./refusal";
@@ -15,19 +17,17 @@ export interface ClampReading {
   alternating: { source: string; frequencyHz: number; rmsA: number }[];
 }
 
-const RULE = gaussLegendre(24);
-
 /**
  * ∮B·dl/μ₀ around a closed polygon in space (m) in one load case (null: the first, or as entered). Conductors count by what of
  * them passes through the loop; open ends, whose field closes by radial currents, by the solid angle under which they see it.
- * Throws RefusedDocumentError for an unknown load case or a loop without extent.
+ * Throws RefusedDocumentError for an unknown load case, a loop without extent, and sides that pass through a conductor or a winding.
  */
 export function clampMeterReading(
   document: PlanDocument,
   loop: readonly Vector[],
   loadCaseId: string | null = null,
 ): ClampReading {
-  if (loop.length < 3 || loop.every((corner) => distance(corner, loop[0] ?? corner) === 0)) {
+  if (loop.length < 3 || loop.every((corner) => distance(corner, loop[0] ?? corner) < LEAST_EXTENT_M)) {
     throw new RefusedDocumentError([
       { path: "loop", message: "a loop has at least three corners that lie apart" },
     ]);
@@ -40,6 +40,8 @@ export function clampMeterReading(
       { path: "loadCases", message: `there is no load case "${loadCaseId ?? ""}"` },
     ]);
 
+  const faults = loopFaults(plan, loop);
+  if (faults.length > 0) throw new RefusedDocumentError(faults);
   const linked = linkedCurrents(plan, loop);
   const sums = new Float64Array(2 * plan.frequencies.groups.length);
   for (const { item, firstSet, group, drive } of plan.components) {
@@ -80,19 +82,31 @@ function linkedCurrents(plan: CompiledPlan, loop: readonly Vector[]): Float64Arr
   return linked;
 }
 
-/** How often a coil or toroid passes through the loop; a dipole's field has no circulation. */
-function equipmentLink(item: Extract<SourceItem, { kind: "equipment" }>, loop: readonly Vector[]): number {
-  const { equipment } = item;
+/** No clamp is smaller, metres. */
+const LEAST_EXTENT_M = 1e-3;
+
+/** How often a loop passes through the turns of a coil or toroid, along their axis; a dipole's field has no circulation. */
+function equipmentLink(
+  { equipment }: Extract<SourceItem, { kind: "equipment" }>,
+  loop: readonly Vector[],
+): number {
   if (equipment.kind === "dipole") return 0;
-  const set = item.sets[0];
-  if (!set) return 0;
-  const panels = loop.flatMap((from, index) => {
-    const to = loop[(index + 1) % loop.length] ?? from;
-    return Array.from({ length: PANELS }, (_, i) => add(scale(from, 1 - i / PANELS), scale(to, i / PANELS)));
-  });
-  const [integrated] = circulation(panels, 1, (x, y, z, out) => set.addField(x, y, z, out, 0), RULE);
-  // Closed turns link a loop a whole number of times.
-  return Math.round((integrated ?? 0) / MU_0);
+  const { centre, axis } = equipment;
+  if (equipment.kind === "toroid") return passagesThrough(loop, centre, axis, equipment.meanRadiusM);
+  const turns = turnCentres(centre, axis, equipment.lengthM, equipment.turns);
+  return turns.reduce((sum, turn) => sum + passagesThrough(loop, turn, axis, equipment.radiusM), 0);
 }
 
-const PANELS = 16;
+/** Signed passages of a loop's sides through the disc that a turn bounds. */
+function passagesThrough(loop: readonly Vector[], centre: Vector, axis: Vector, radiusM: number): number {
+  let passages = 0;
+  loop.forEach((from, index) => {
+    const to = loop[(index + 1) % loop.length] ?? from;
+    const before = dot(axis, subtract(from, centre));
+    const after = dot(axis, subtract(to, centre));
+    if (before < 0 === after < 0) return;
+    const at = along(from, subtract(to, from), before / (before - after));
+    if (distance(at, centre) < radiusM) passages += after > before ? 1 : -1;
+  });
+  return passages;
+}
