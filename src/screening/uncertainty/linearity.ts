@@ -10,6 +10,8 @@ import { inputVectors, traceBound, type InputVector } from "./input-vectors";
 
 /** Position tolerances above this share of the distance to a conductor leave the first order. */
 const NEAR_SHARE = 0.2;
+/** Relative change at which the power iteration stops. */
+const CONVERGED = 1e-6;
 /** A field below so many standard deviations of itself has no direction to rely on. */
 const RESOLVED = 3;
 
@@ -83,19 +85,20 @@ function comparedVector(
   { groups, values }: Pick<InputVector, "groups" | "values">,
 ): SparseVector {
   // A range is judged by its steady part: the rest is added by magnitude and has no direction to lose.
-  if (limit.kind === "range") return dcPart(groups, values, 3);
-  if (limit.kind === "heading") return dcPart(groups, values, 2);
+  if (limit.kind === "range") return dcPart(groups, values, stride, 3);
+  if (limit.kind === "heading") return dcPart(groups, values, stride, 2);
   const { axis } = measure;
+  if (!axis && limit.kind !== "alternating") return dcPart(groups, values, stride, measure.width);
   if (!axis) return { starts: groups.map((group) => stride * group), run: stride, values };
   const projected = new Float64Array(values.length / 3);
   for (let i = 0; i < projected.length; i++) projected[i] = product(values, 3 * i, axis, 0, 3);
   return { starts: groups.map((group) => 2 * group), run: 2, values: projected };
 }
 
-function dcPart(groups: number[], values: Float64Array, run: number): SparseVector {
+function dcPart(groups: number[], values: Float64Array, stride: number, run: number): SparseVector {
   const dc = groups.indexOf(0);
   if (dc < 0) return { starts: [0], run, values: new Float64Array(run) };
-  return { starts: [0], run, values: values.slice(6 * dc, 6 * dc + run) };
+  return { starts: [0], run, values: values.slice(stride * dc, stride * dc + run) };
 }
 
 /** Of Σ d dᵀ over the inputs' vectors, by power iteration. */
@@ -113,7 +116,8 @@ function largestEigenvalue(inputs: readonly SparseVector[], dimension: number): 
     const size = Math.sqrt(product(vector, 0, vector, 0, dimension));
     if (size === 0) return 0;
     const direction = vector.map((value) => value / size);
-    if (iteration > 0) eigenvalue = size;
+    if (Math.abs(size - eigenvalue) <= CONVERGED * size) return size;
+    eigenvalue = iteration > 0 ? size : 0;
     vector = new Float64Array(dimension);
     for (const input of inputs) addProjection(vector, input, direction);
   }

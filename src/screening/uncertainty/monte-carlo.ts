@@ -7,6 +7,7 @@ import { RECTANGULAR, type FamilyKind } from "./families";
 import { backgroundVariance } from "./first-order";
 import { inputVectors, type InputVector } from "./input-vectors";
 import { PackedInputs } from "./packed-inputs";
+import { partLumped } from "./lumped-inputs";
 import type { NearItems } from "./near-items";
 import type { RandomStream } from "./random";
 
@@ -32,7 +33,9 @@ export function monteCarloUncertainty(
   const nearSet = new Set(near);
   const base = baseGroups(judging, factors, nearSet);
   const inputs = inputVectors(judging, factors, measured.slope, nearSet);
-  const drawn = nearItems ? inputs : droppingSmall(inputs);
+  const { single: drawn, lumped } = nearItems
+    ? { single: inputs, lumped: null }
+    : partLumped(droppingSmall(inputs), judging.measure.width);
   const shared = drawn.map(({ kind, key }) => nearItems?.drawsOf(kind, key));
   const draws = new Float64Array(drawn.length);
   const packed = new PackedInputs(drawn, judging.stride);
@@ -53,13 +56,14 @@ export function monteCarloUncertainty(
     for (let input = 0; input < draws.length; input++)
       draws[input] = shared[input]?.[i] ?? random.rectangular();
     packed.addTo(groups, draws);
+    lumped?.addTo(groups, random);
     nearItems?.addTo(groups, i, factors, judging.included, currentDraw);
     const state: MeasuredState = {
       groups,
       bounds: bounds.drawn(judging.background.bounds, sensor.positionToleranceM, drawOf, random),
       earth: earth && drawnEarth(earth, random),
     };
-    values[i] = judging.measure.value(state) + backgroundSigma * random.normal();
+    values[i] = judging.measure.value(state) + (backgroundSigma > 0 ? backgroundSigma * random.normal() : 0);
   }
   values.sort();
   return Math.max(0, (values[Math.ceil(QUANTILE * DRAWS) - 1] as number) - measured.value);
@@ -74,7 +78,9 @@ function baseGroups(judging: LimitJudging, factors: CaseFactors, near: ReadonlyS
   const groups = new Float64Array(judging.stride * plan.frequencies.groups.length);
   sumGroups(plan, judging.phasors, judging.stride, factors.items, included, groups);
   judging.background.staticT.forEach((component, i) => (groups[i] = (groups[i] as number) + component));
-  return groups;
+  // Limits on DC look at nothing but the first group.
+  const dcOnly = judging.limit.kind !== "alternating" && judging.limit.kind !== "range";
+  return dcOnly ? groups.slice(0, judging.stride) : groups;
 }
 
 const sizeOf = ({ values }: InputVector): number => product(values, 0, values, 0, values.length);

@@ -137,6 +137,32 @@ describe("Monte Carlo uncertainty", () => {
   });
 });
 
+describe("many small inputs", () => {
+  it("are drawn together to what they give one by one", () => {
+    // Currents that cancel around the sensor, so that only their spread is left; each holds a fiftieth of a per cent of a dimension.
+    const around = (count: number): Partial<CircuitInput>[] =>
+      Array.from({ length: count }, (_, i) => {
+        const angle = (2 * Math.PI * i) / count;
+        const [y, z] = [1 + 2 * Math.cos(angle), 2 * Math.sin(angle)];
+        return {
+          path: [
+            [-5000, y, z],
+            [5000, y, z],
+          ],
+          currentTolerancePercent: 20,
+        };
+      });
+    const many = finding(around(240));
+    const few = finding(around(60));
+    expect(many.uncertaintyMethod).toBe("monte-carlo");
+    // Two dimensions of equal spread: the 97.5 % point of a Rayleigh distribution, σ√(−2 ln 0.025).
+    const sigma = (count: number) => (0.2 / Math.sqrt(3)) * wire(10, 2) * Math.sqrt(count / 2);
+    const reach = Math.sqrt(-2 * Math.log(0.025));
+    expect(many.expandedUncertainty / (reach * sigma(240))).toBeCloseTo(1, 1.3);
+    expect(few.expandedUncertainty / (reach * sigma(60))).toBeCloseTo(1, 1.3);
+  });
+});
+
 describe("randomStream", () => {
   it("has nought for its mean and one for its variance, and differs by seed and stream", () => {
     const sample = (seed: string, stream: number) => {
