@@ -61,7 +61,7 @@ const mapRequest = (columns: number): FieldMapRequest => ({
   grid: levelGrid(1, 0, 0, 0.1, columns, columns),
 });
 
-describe("screening behind a message port", () => {
+describe("screening behind a message port", { timeout: 30_000 }, () => {
   it("gives what the engine gives", async () => {
     const client = connected();
     const document = strungPlan(3);
