@@ -80,7 +80,9 @@ test("a first start that is killed half way does not spoil the next one", async 
   const second = start();
   await second.says(runs);
   expect(second.output()).toContain("taking over what it left");
-  expect(await query("select id from organisations")).toHaveLength(1);
+  // Whole and once: both organisations of the demo, and the screened plan that comes last.
+  expect(await query("select name from organisations")).toHaveLength(2);
+  expect(await query("select id from screenings")).toHaveLength(1);
   second.signal("SIGTERM");
   expect(await second.ended).toBe(0);
 });
