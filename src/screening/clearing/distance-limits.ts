@@ -44,7 +44,7 @@ const catalogue = SENSOR_KINDS.flatMap(({ id, name, limits }) =>
         : ([limit.limitT, "T", fieldText(limit.limitT)] as const);
     const shown = {
       id: `${id}-${limit.kind}`,
-      label: `${name}, ${text}`,
+      label: `${name}, ${text.replace(" ", "\u00a0")}`,
       kind: limit.kind,
       limit: bound,
       unit,
