@@ -48,6 +48,7 @@ export const permissions = {
   "drawing.read": { scope: "plan", allow: office },
   "drawing.upload": { scope: "plan", allow: ["planner"] },
   "screening.read": { scope: "plan", allow: office },
+  "clamp-meter.read": { scope: "plan", allow: office },
   "screening.run": { scope: "plan", allow: ["planner", "auditor"] },
   "notice.read": { scope: "plan", allow: office },
   "notice.issue": { scope: "plan", allow: ["planner"] },

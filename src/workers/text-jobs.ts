@@ -2,6 +2,7 @@ import type { PlanDocument } from "~/domain/plan-document/plan-document";
 import { readPlanDocument } from "~/domain/plan-document/read";
 import { resultText } from "~/domain/result-text";
 import type { ScreeningResult } from "~/domain/screening-result";
+import { clampMeterReading } from "~/screening/clamp-meter";
 import { RefusedDocumentError } from "~/screening/refusal";
 import { screen } from "~/screening/screen";
 import type { FindingSummary, ScreenedText, TextAnswer, TextJob } from "./text-protocol";
@@ -10,14 +11,16 @@ import type { FindingSummary, ScreenedText, TextAnswer, TextJob } from "./text-p
  * Reads, judges and screens a document's text in one go, so that a large one costs the thread that asks nothing but its
  * bytes. Never throws.
  */
-export function answerTextJob({ text }: TextJob): TextAnswer {
-  const read = readPlanDocument(text);
+export function answerTextJob(job: TextJob): TextAnswer {
+  const read = readPlanDocument(job.text);
   if (!read.ok) {
     if ("notJson" in read) return { type: "not-json", reason: read.notJson };
     return { type: "refused", faults: read.faults };
   }
   try {
-    return { type: "screened", screened: screenedText(read.document) };
+    if (job.type === "screen-text") return { type: "screened", screened: screenedText(read.document) };
+    const { loop, loadCaseId } = job.request;
+    return { type: "clamped", reading: clampMeterReading(read.document, loop, loadCaseId) };
   } catch (error) {
     if (error instanceof RefusedDocumentError) return { type: "refused", faults: error.faults };
     return { type: "failed", message: error instanceof Error ? error.message : String(error) };

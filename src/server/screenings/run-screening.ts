@@ -1,5 +1,6 @@
+import type { ClampMeterRequest } from "~/domain/clamp-meter";
 import { type Fault, Refusal } from "~/domain/errors";
-import type { ScreenedText, TextAnswer, TextJob } from "~/workers/text-protocol";
+import type { ClampReading, ScreenedText, TextAnswer, TextJob } from "~/workers/text-protocol";
 import { screeningPool } from "./pool";
 import { withinLimit } from "./within-limit";
 
@@ -25,19 +26,33 @@ export async function runScreening(
   limitMs = screeningLimitMs,
 ): Promise<ScreenedText> {
   const answer = await inPool({ type: "screen-text", text }, signal, limitMs);
-  switch (answer.type) {
-    case "screened":
-      return answer.screened;
-    case "refused":
-      throw refusedDocument(answer.faults);
-    case "not-json":
-      throw new Refusal(
-        "request.malformed",
-        `The document is not valid JSON: ${answer.reason}. Check it and send it again.`,
-      );
-    case "failed":
-      throw new Error(`The screening failed: ${answer.message}`);
-  }
+  if (answer.type === "screened") return answer.screened;
+  throw refusalFor(answer);
+}
+
+/** The reading to expect around a loop, worked out in the pool like a screening. @throws Refusal as `runScreening` does */
+export async function clampMeterInPool(
+  text: string,
+  request: ClampMeterRequest,
+  signal?: AbortSignal,
+): Promise<ClampReading> {
+  const answer = await inPool({ type: "clamp-meter-text", text, request }, signal, screeningLimitMs);
+  if (answer.type === "clamped") return answer.reading;
+  throw refusalFor(answer);
+}
+
+function refusalFor(answer: TextAnswer): Error {
+  if (answer.type === "refused") return refusedDocument(answer.faults);
+  if (answer.type === "not-json")
+    return new Refusal(
+      "request.malformed",
+      `The document is not valid JSON: ${answer.reason}. Check it and send it again.`,
+    );
+  return new Error(
+    answer.type === "failed"
+      ? `The screening failed: ${answer.message}`
+      : "The worker answered something else.",
+  );
 }
 
 const inPool = (job: TextJob, signal: AbortSignal | undefined, limitMs: number): Promise<TextAnswer> =>

@@ -1,15 +1,14 @@
 import { z } from "zod";
-import { Refusal } from "~/domain/errors";
 import type { Member } from "~/domain/permissions";
 import type { Verdict } from "~/domain/screening-result";
 import type { ScreenedText } from "~/workers/text-protocol";
 import { recordActivity } from "../activity/record";
 import { db } from "../db/client";
 import { type FindingRow, insertFindings } from "../db/queries/findings";
-import { findPlanDocument } from "../db/queries/plan-documents";
 import type { PlanRow } from "../db/queries/plans";
 import { insertScreening } from "../db/queries/screenings";
 import { runScreening } from "./run-screening";
+import { savedDocumentText } from "./saved-document";
 
 /** The version of the working copy that the person has before them. */
 export const screeningInput = z.strictObject({ version: z.int().min(1) });
@@ -32,15 +31,8 @@ export async function screenPlan(
   signal?: AbortSignal,
 ): Promise<StoredScreening> {
   const { organisationId } = plan;
-  const saved = await findPlanDocument(db(), organisationId, plan.id);
-  if (saved === undefined) throw new Error("A plan has no document.");
-  if (saved.version !== version)
-    throw new Refusal(
-      "state.conflict",
-      `The plan is at version ${String(saved.version)} now. Load it, look at what has changed, and screen it again.`,
-      { detail: { version: saved.version } },
-    );
-  const screened = await runScreening(saved.document, signal);
+  const document = await savedDocumentText(plan, version);
+  const screened = await runScreening(document, signal);
   const id = crypto.randomUUID();
   await db().transaction(async (tx) => {
     await insertScreening(tx, {
@@ -51,7 +43,7 @@ export async function screenPlan(
       inputHash: screened.inputHash,
       engineVersion: screened.engineVersion,
       verdict: screened.verdict,
-      document: saved.document,
+      document,
       result: screened.text,
       screenedBy: member.userId,
       screenedAt: new Date(),
