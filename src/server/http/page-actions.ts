@@ -17,6 +17,8 @@ export const pageActions: Readonly<Record<string, Action>> = {
   "/plans/[planid]": "plan.read",
   "/plans/[planid]/screenings/[screeningid]": "screening.read",
   "/plans/[planid]/notices/[noticeid]": "notice.read",
+  "/plans/[planid]/revisions": "revision.read",
+  "/plans/[planid]/revisions/[revisionid]": "revision.read",
 };
 
 /** The action of a route pattern, whatever case the router gives the parameters in. */
