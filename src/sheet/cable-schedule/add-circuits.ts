@@ -1,8 +1,10 @@
 import { conductorRadiusM, touchingSpacingM } from "~/domain/catalogue";
+import type { ArrangementKind } from "~/domain/plan-document/arrangement";
 import type { Circuit } from "~/domain/plan-document/circuit";
 import type { PlanDocument } from "~/domain/plan-document/plan-document";
 import type { Supply } from "~/domain/plan-document/supply";
-import { arrangementOf, blankCircuit, type OfferedArrangement } from "../edits/circuits";
+import { arrangementOf } from "../edits/arrangements";
+import { blankCircuit } from "../edits/circuits";
 import { newId } from "../edits/ids";
 import type { Cable, ScheduleRow } from "./read-schedule";
 
@@ -15,7 +17,7 @@ export interface ScheduleChoices {
 
 const arrangementByLive = { 1: "single", 2: "pair", 3: "trefoil" } as const satisfies Record<
   1 | 2 | 3,
-  OfferedArrangement
+  ArrangementKind
 >;
 
 /** Without a count of cores the cable is taken for a pair. */

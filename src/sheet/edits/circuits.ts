@@ -1,46 +1,12 @@
-import type { Arrangement } from "~/domain/plan-document/arrangement";
 import type { Circuit } from "~/domain/plan-document/circuit";
 import type { PlanDocument } from "~/domain/plan-document/plan-document";
 import type { Supply } from "~/domain/plan-document/supply";
 import type { Point3 } from "../geometry";
+import { arrangementOf, circuitProblem, fitsSupply, rearranged } from "./arrangements";
 import { copyName, freeName, newId } from "./ids";
 import { tidyPoint } from "./paths";
 
-/** Arrangements that the sheet offers, commonest first, with the supplies that they carry. */
-export const offeredArrangements = [
-  { kind: "single", label: "single conductor", supplies: ["dc", "ac1"] },
-  { kind: "pair", label: "pair, go and return", supplies: ["dc", "ac1"] },
-  { kind: "flat", label: "flat, three in a row", supplies: ["ac3"] },
-  { kind: "trefoil", label: "trefoil", supplies: ["ac3"] },
-  { kind: "quad", label: "square, three and neutral", supplies: ["ac3"] },
-  { kind: "flat-n", label: "flat, three and neutral", supplies: ["ac3"] },
-] as const satisfies readonly {
-  kind: Arrangement["kind"];
-  label: string;
-  supplies: readonly Supply["kind"][];
-}[];
-
-export type OfferedArrangement = (typeof offeredArrangements)[number]["kind"];
-
-const offered = (kind: Arrangement["kind"]) => offeredArrangements.find((entry) => entry.kind === kind);
-
-export const fitsSupply = (kind: Arrangement["kind"], supply: Supply["kind"]): boolean =>
-  offered(kind)?.supplies.some((fitting) => fitting === supply) ?? true;
-
-/** Axis-to-axis distance to begin with: small single-core cables side by side. */
-const usualSpacingM = 0.03;
 const usualRadiusM = 0.005;
-
-const spacingOf = (arrangement: Arrangement): number =>
-  "spacingM" in arrangement ? arrangement.spacingM : usualSpacingM;
-
-/** The arrangement of another kind with the spacing and the turn of the present one. */
-export function arrangementOf(kind: OfferedArrangement, present: Arrangement | null): Arrangement {
-  const rollDeg = present?.rollDeg ?? 0;
-  if (kind === "single") return { kind, rollDeg, parallel: null };
-  const spacingM = present === null ? usualSpacingM : spacingOf(present);
-  return { kind, spacingM, rollDeg, parallel: null };
-}
 
 /** The one figure that stands for a supply: of unbalanced phases the first. */
 const currentOf = (supply: Supply): number =>
@@ -55,11 +21,43 @@ export function supplyOf(kind: Supply["kind"], present: Supply | null): Supply {
   return kind === "ac1" ? { kind, ...alternating } : { kind, ...alternating, sequence: "abc" };
 }
 
-/** Puts a supply into a circuit; an arrangement that cannot carry it gives way to the usual one that can. */
+/** The supply with another current; unbalanced phases become balanced. */
+export function withCurrent(supply: Supply, currentA: number): Supply {
+  if (supply.kind !== "ac3") return { ...supply, currentA };
+  const { kind, frequencyHz, phaseDeg, harmonics, sequence } = supply;
+  return { kind, frequencyHz, phaseDeg, harmonics, sequence, currentA };
+}
+
+/** The figure that the current's input edits; null for unbalanced phases and for a current that is not known. */
+export const balancedCurrentA = (supply: Supply | null): number | null =>
+  supply === null ? null : (supply.currentA ?? null);
+
+const supplyKinds = ["dc", "ac1", "ac3"] as const satisfies readonly Supply["kind"][];
+
+/** The supply that an arrangement stands for while none is known: the commonest that it carries. */
+export const usualSupplyKind = (circuit: Circuit): Supply["kind"] =>
+  supplyKinds.find((kind) => fitsSupply(circuit, supplyOf(kind, null))) ?? "dc";
+
+/** Chooses the kind of supply. While the current is not known only the arrangement follows; no current is entered. */
+export function withSupplyKind(circuit: Circuit, kind: Supply["kind"]): Circuit {
+  const chosen = withSupply(circuit, supplyOf(kind, circuit.supply));
+  return circuit.supply === null ? { ...chosen, supply: null } : chosen;
+}
+
+/** Puts a supply into a circuit; an arrangement or a stray current that cannot go with it gives way to the usual one. */
 export function withSupply(circuit: Circuit, supply: Supply | null): Circuit {
-  if (supply === null || fitsSupply(circuit.arrangement.kind, supply.kind)) return { ...circuit, supply };
-  const kind = supply.kind === "ac3" ? "trefoil" : "pair";
-  return { ...circuit, supply, arrangement: arrangementOf(kind, circuit.arrangement) };
+  if (supply === null || fitsSupply(circuit, supply)) return { ...circuit, supply };
+  const usual = (): Circuit => {
+    return { ...rearranged(circuit, supply.kind === "ac3" ? "trefoil" : "pair"), supply };
+  };
+  const candidates = [{ ...circuit, supply, strayAngleDeg: 0 }, usual(), { ...usual(), strayAngleDeg: 0 }];
+  return (
+    candidates.find((candidate) => circuitProblem(candidate) === null) ?? {
+      ...usual(),
+      strayCurrentA: null,
+      strayAngleDeg: 0,
+    }
+  );
 }
 
 /** A circuit with everything as a rule gives it, neither traced nor loaded. */

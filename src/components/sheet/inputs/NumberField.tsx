@@ -2,13 +2,17 @@ import type { ReactNode } from "react";
 import { numberText, readNumber } from "~/sheet/read-number";
 import { CommitField } from "./CommitField";
 
+/** Why a change was refused; null for any answer but words. */
+export const refusalOf = (answer: unknown): string | null => (typeof answer === "string" ? answer : null);
+
 interface Props {
   label: ReactNode;
   /** In SI units; null shows an empty field. */
   value: number | null;
-  onChange: (value: number) => void;
+  /** Takes the value; words in its answer say why it was refused. */
+  onChange: (value: number) => unknown;
   /** Given where the field may be emptied. */
-  onEmpty?: (() => void) | undefined;
+  onEmpty?: (() => unknown) | undefined;
   unit?: string | undefined;
   /** How many of the shown unit make one SI unit: 1000 for mm. */
   perUnit?: number | undefined;
@@ -39,8 +43,7 @@ export function NumberField(props: Props) {
   const wanted = `Type a ${whole ? "whole " : ""}number${boundWords(props)}.`;
   const commit = (text: string): string | null => {
     if (text.trim() === "" && onEmpty) {
-      onEmpty();
-      return null;
+      return refusalOf(onEmpty());
     }
     const typed = readNumber(text);
     if (typed === null || (whole && !Number.isInteger(typed))) return wanted;
@@ -51,8 +54,7 @@ export function NumberField(props: Props) {
       (most !== undefined && si > most) ||
       (below !== undefined && si >= below);
     if (refused) return wanted;
-    onChange(Number(si.toPrecision(12)));
-    return null;
+    return refusalOf(onChange(Number(si.toPrecision(12))));
   };
   return (
     <CommitField

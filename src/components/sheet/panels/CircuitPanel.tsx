@@ -1,55 +1,25 @@
 import type { ReactNode } from "react";
 import { Button } from "~/components/ui/Button";
-import type { Arrangement } from "~/domain/plan-document/arrangement";
 import type { Circuit } from "~/domain/plan-document/circuit";
-import {
-  addCircuitToRoute,
-  arrangementOf,
-  fitsSupply,
-  isTraced,
-  offeredArrangements,
-  updateCircuit,
-} from "~/sheet/edits/circuits";
+import { addCircuitToRoute, isTraced } from "~/sheet/edits/circuits";
 import { removeCircuitAndEmptyRoute } from "~/sheet/edits/remove";
-import { Choice } from "../inputs/Choice";
 import { CommitField } from "../inputs/CommitField";
 import { NumberField } from "../inputs/NumberField";
 import { beginStep, focusDrawing } from "../StepBar";
 import { useDocument, useEditable, useSheetStore } from "../store";
+import { ArrangementFields } from "./ArrangementFields";
+import { useChangeCircuit } from "../use-change-circuit";
 import { SupplyFields } from "./SupplyFields";
 import { ToleranceFields } from "./ToleranceFields";
 import { VertexList } from "./VertexList";
 
-function arrangementOptions(circuit: Circuit): { value: Arrangement["kind"]; label: string }[] {
-  const { arrangement, supply } = circuit;
-  const fitting = offeredArrangements.filter(({ kind }) => supply === null || fitsSupply(kind, supply.kind));
-  const options: { value: Arrangement["kind"]; label: string }[] = fitting.map(({ kind, label }) => ({
-    value: kind,
-    label,
-  }));
-  return options.some(({ value }) => value === arrangement.kind)
-    ? options
-    : [...options, { value: arrangement.kind, label: arrangement.kind }];
-}
-
-/** Where the phases lie, seen along the route. */
-function phaseWords(
-  kind: Arrangement["kind"],
-  [a = "L1", b = "L2", c = "L3"]: readonly string[],
-): string | undefined {
-  if (kind === "flat") return `${a}, ${b}, ${c} from the left, seen along the route.`;
-  if (kind === "trefoil") return `${a} and ${b} below, ${c} on top, seen along the route.`;
-  if (kind === "quad") return `${a}, ${b}, ${c}, N clockwise from the upper left, seen along the route.`;
-  return kind === "flat-n" ? `${a}, ${b}, ${c}, N from the left, seen along the route.` : undefined;
-}
-
+/** All that the plan says of a circuit. */
 export function CircuitPanel({ circuit }: { circuit: Circuit }) {
   const store = useSheetStore();
   const document = useDocument();
   const disabled = !useEditable();
-  const change = (label: string, how: (circuit: Circuit) => Circuit) =>
-    store.edit(`${label} of ${circuit.name}`, (whole) => updateCircuit(whole, circuit.id, how));
-  const { arrangement, route } = circuit;
+  const change = useChangeCircuit(circuit);
+  const { route } = circuit;
   return (
     <div className="grid gap-3">
       <CommitField
@@ -80,63 +50,7 @@ export function CircuitPanel({ circuit }: { circuit: Circuit }) {
         </Notice>
       )}
       <SupplyFields circuit={circuit} change={change} disabled={disabled} />
-      <div className="grid grid-cols-2 gap-3">
-        <Choice
-          label="Arrangement"
-          value={arrangement.kind}
-          hint={phaseWords(arrangement.kind, store.phaseLabels)}
-          options={arrangementOptions(circuit)}
-          disabled={disabled}
-          onChange={(kind) => {
-            const offered = offeredArrangements.find((entry) => entry.kind === kind);
-            if (offered !== undefined)
-              change("Arrangement", (present) => ({
-                ...present,
-                arrangement: arrangementOf(offered.kind, present.arrangement),
-              }));
-          }}
-        />
-        {"spacingM" in arrangement && (
-          <NumberField
-            label="Spacing, axis to axis"
-            unit="mm"
-            perUnit={1000}
-            least={2 * circuit.conductorRadiusM}
-            most={100}
-            value={arrangement.spacingM}
-            disabled={disabled}
-            onChange={(spacingM) =>
-              change("Spacing", (present) => ({ ...present, arrangement: { ...arrangement, spacingM } }))
-            }
-          />
-        )}
-        <NumberField
-          label="Conductor radius"
-          unit="mm"
-          perUnit={1000}
-          above={0}
-          most={"spacingM" in arrangement ? arrangement.spacingM / 2 : 10}
-          value={circuit.conductorRadiusM}
-          disabled={disabled}
-          onChange={(conductorRadiusM) =>
-            change("Conductor radius", (present) => ({ ...present, conductorRadiusM }))
-          }
-        />
-        <NumberField
-          label="Turn of the section"
-          unit="°"
-          least={-360}
-          most={360}
-          value={arrangement.rollDeg}
-          disabled={disabled}
-          onChange={(rollDeg) =>
-            change("Turn of the section", (present) => ({
-              ...present,
-              arrangement: { ...present.arrangement, rollDeg },
-            }))
-          }
-        />
-      </div>
+      <ArrangementFields circuit={circuit} change={change} disabled={disabled} />
       <ToleranceFields circuit={circuit} change={change} disabled={disabled} />
       {route !== null && (
         <fieldset className="grid grid-cols-2 gap-3">

@@ -1,7 +1,9 @@
+import { useState } from "react";
 import { Button } from "~/components/ui/Button";
 import type { Supply } from "~/domain/plan-document/supply";
 import { nextOrder } from "~/sheet/edits/harmonics";
 import { readNumber, numberText } from "~/sheet/read-number";
+import { refusalOf } from "../inputs/NumberField";
 import { CellInput } from "../tables/CellInput";
 
 type Harmonics = Exclude<Supply, { kind: "dc" }>["harmonics"];
@@ -11,14 +13,19 @@ interface Props {
   of: string;
   frequencyHz: number;
   harmonics: Harmonics;
+  /** Where nothing carries back what third harmonics add up to. */
+  withoutTriples?: boolean;
   disabled: boolean;
-  onChange: (harmonics: Harmonics) => void;
+  /** Takes them; words in its answer say why they were refused. */
+  onChange: (harmonics: Harmonics) => unknown;
 }
 
 /** Harmonics of a supply: each order once, as a share of the fundamental. */
-export function HarmonicsFields({ of, frequencyHz, harmonics, disabled, onChange }: Props) {
-  const set = (index: number, part: Partial<Harmonics[number]>) =>
-    onChange(harmonics.map((harmonic, i) => (i === index ? { ...harmonic, ...part } : harmonic)));
+export function HarmonicsFields(props: Props) {
+  const { of, frequencyHz, harmonics, withoutTriples = false, disabled, onChange } = props;
+  const [problem, setProblem] = useState<string | null>(null);
+  const set = (index: number, part: Partial<Harmonics[number]>): string | null =>
+    refusalOf(onChange(harmonics.map((harmonic, i) => (i === index ? { ...harmonic, ...part } : harmonic))));
   return (
     <fieldset className="grid gap-1">
       <legend className="mb-1 text-sm font-semibold">Harmonics</legend>
@@ -52,8 +59,7 @@ export function HarmonicsFields({ of, frequencyHz, harmonics, disabled, onChange
                         return "A whole number, 2 to 1000.";
                       if (harmonics.some((other, i) => i !== index && other.order === typed))
                         return "This order is there already.";
-                      set(index, { order: typed });
-                      return null;
+                      return set(index, { order: typed });
                     }}
                   />
                 </td>
@@ -66,8 +72,7 @@ export function HarmonicsFields({ of, frequencyHz, harmonics, disabled, onChange
                     onCommit={(text) => {
                       const typed = readNumber(text);
                       if (typed === null || typed < 0 || typed > 1000) return "0 to 1000 %.";
-                      set(index, { percent: typed });
-                      return null;
+                      return set(index, { percent: typed });
                     }}
                   />
                 </td>
@@ -80,8 +85,7 @@ export function HarmonicsFields({ of, frequencyHz, harmonics, disabled, onChange
                     onCommit={(text) => {
                       const typed = readNumber(text);
                       if (typed === null || Math.abs(typed) > 3600) return "Type degrees.";
-                      set(index, { angleDeg: typed });
-                      return null;
+                      return set(index, { angleDeg: typed });
                     }}
                   />
                 </td>
@@ -107,11 +111,17 @@ export function HarmonicsFields({ of, frequencyHz, harmonics, disabled, onChange
         <Button
           small
           className="justify-self-start"
-          onClick={() => onChange([...harmonics, { order: nextOrder(harmonics), percent: 10, angleDeg: 0 }])}
+          onClick={() => {
+            const order = nextOrder(harmonics, withoutTriples);
+            setProblem(refusalOf(onChange([...harmonics, { order, percent: 10, angleDeg: 0 }])));
+          }}
         >
           Add a harmonic
         </Button>
       )}
+      <p role="alert" className="field-error">
+        {problem}
+      </p>
     </fieldset>
   );
 }

@@ -11,6 +11,7 @@ import { NumberField } from "../inputs/NumberField";
 import { useDocument, useEditable, useSheetStore } from "../store";
 import { AxisFields } from "./AxisFields";
 import { PositionFields } from "./PositionFields";
+import { BackgroundFields } from "./BackgroundFields";
 import { LimitFields } from "./LimitFields";
 
 /** The catalogue's kind whose limits the sensor has; "" where they are its own. */
@@ -80,6 +81,7 @@ export function SensorPanel({ sensor }: { sensor: Sensor }) {
         disabled={disabled}
         earthKnown={document.earthField !== null}
       />
+      <BackgroundFields sensor={sensor} change={change} disabled={disabled} />
       {!disabled && (
         <Button
           small

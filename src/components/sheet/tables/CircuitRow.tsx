@@ -1,18 +1,13 @@
 import { Button } from "~/components/ui/Button";
 import type { Circuit } from "~/domain/plan-document/circuit";
-import {
-  arrangementOf,
-  fitsSupply,
-  offeredArrangements,
-  supplyOf,
-  updateCircuit,
-  withSupply,
-} from "~/sheet/edits/circuits";
+import { arrangementTitles, fittingKinds, rearranged } from "~/sheet/edits/arrangements";
+import { balancedCurrentA, supplyOf, withCurrent, withSupply, withSupplyKind } from "~/sheet/edits/circuits";
 import { removeCircuits } from "~/sheet/edits/remove";
 import { numberText, readNumber } from "~/sheet/read-number";
 import { basisOptions } from "../panels/basis";
-import { balancedCurrentA, supplyOptions, withCurrent } from "../panels/SupplyFields";
+import { supplyOptions, useSupplyKind } from "../panels/SupplyFields";
 import { useDocument, useEditable, useSheetStore } from "../store";
+import { useChangeCircuit } from "../use-change-circuit";
 import { CellInput } from "./CellInput";
 import { CellSelect } from "./CellSelect";
 
@@ -22,15 +17,16 @@ export function CircuitRow({ circuit }: { circuit: Circuit }) {
   const disabled = !useEditable();
   const { routes } = useDocument();
   const { name, supply, arrangement } = circuit;
-  const change = (label: string, how: (present: Circuit) => Circuit) =>
-    store.edit(`${label} of ${name}`, (whole) => updateCircuit(whole, circuit.id, how));
-  const number = (text: string, least: number, take: (value: number) => void): string | null => {
+  const change = useChangeCircuit(circuit);
+  const [kind, setKind] = useSupplyKind(circuit);
+  const currentA = balancedCurrentA(supply);
+  const isUnbalanced = supply?.kind === "ac3" && supply.phases !== undefined;
+  const number = (text: string, least: number, take: (value: number) => string | null): string | null => {
     const value = readNumber(text);
     if (value === null) return "Type a number.";
     if (value < least) return `At least ${numberText(least)}.`;
     if (value > 1e6) return "At most a million.";
-    take(value);
-    return null;
+    return take(value);
   };
   const place = circuit.route?.id ?? (circuit.path === null ? "" : "own");
   const placeOptions = [
@@ -38,10 +34,6 @@ export function CircuitRow({ circuit }: { circuit: Circuit }) {
     ...(circuit.path === null ? [] : [{ value: "own", label: "a path of its own" }]),
     ...routes.map((route) => ({ value: route.id, label: route.name })),
   ];
-  const kind = supply?.kind ?? "";
-  const arrangements = offeredArrangements.filter(
-    (entry) => supply === null || fitsSupply(entry.kind, supply.kind),
-  );
   return (
     <tr>
       <th scope="row">
@@ -76,37 +68,28 @@ export function CircuitRow({ circuit }: { circuit: Circuit }) {
         <CellSelect
           label={`Supply of ${name}`}
           value={kind}
-          options={[{ value: "", label: "not known" }, ...supplyOptions]}
+          options={supplyOptions}
           disabled={disabled}
-          onChange={(next) =>
-            change("Supply", (present) =>
-              withSupply(present, next === "" ? null : supplyOf(next, present.supply)),
-            )
-          }
+          onChange={(next) => {
+            setKind(next);
+            change("Supply", (present) => withSupplyKind(present, next));
+          }}
         />
       </td>
       <td>
         <CellInput
           label={`Current of ${name}, A`}
-          value={supply === null ? "" : numberText(balancedCurrentA(supply) ?? 0)}
+          value={currentA === null ? "" : numberText(currentA)}
           numeric
-          placeholder="not known"
-          disabled={disabled || (supply?.kind === "ac3" && supply.phases !== undefined)}
+          placeholder={isUnbalanced ? "by phase" : "not known"}
+          disabled={disabled || isUnbalanced}
           onCommit={(text) => {
-            if (text.trim() === "") {
-              change("Current", (present) => ({ ...present, supply: null }));
-              return null;
-            }
-            const isDc =
-              supply === null
-                ? arrangement.kind === "pair" || arrangement.kind === "single"
-                : supply.kind === "dc";
-            return number(text, isDc ? -1e6 : 0, (currentA) =>
+            if (text.trim() === "") return change("Current", (present) => ({ ...present, supply: null }));
+            return number(text, kind === "dc" ? -1e6 : 0, (typedA) =>
               change("Current", (present) =>
-                withSupply(
-                  present,
-                  withCurrent(present.supply ?? supplyOf(isDc ? "dc" : "ac3", null), currentA),
-                ),
+                present.supply === null
+                  ? withSupply(present, withCurrent(supplyOf(kind, null), typedA))
+                  : { ...present, supply: withCurrent(present.supply, typedA) },
               ),
             );
           }}
@@ -142,21 +125,9 @@ export function CircuitRow({ circuit }: { circuit: Circuit }) {
         <CellSelect
           label={`Arrangement of ${name}`}
           value={arrangement.kind}
-          options={[
-            ...arrangements.map((entry) => ({ value: entry.kind as string, label: entry.label as string })),
-            ...(arrangements.some((entry) => entry.kind === arrangement.kind)
-              ? []
-              : [{ value: arrangement.kind as string, label: arrangement.kind as string }]),
-          ]}
+          options={fittingKinds(circuit).map((value) => ({ value, label: arrangementTitles[value] }))}
           disabled={disabled}
-          onChange={(chosen) => {
-            const offered = offeredArrangements.find((entry) => entry.kind === chosen);
-            if (offered !== undefined)
-              change("Arrangement", (present) => ({
-                ...present,
-                arrangement: arrangementOf(offered.kind, present.arrangement),
-              }));
-          }}
+          onChange={(chosen) => change("Arrangement", (present) => rearranged(present, chosen))}
         />
       </td>
       <td>
@@ -167,15 +138,14 @@ export function CircuitRow({ circuit }: { circuit: Circuit }) {
             numeric
             disabled={disabled}
             onCommit={(text) => {
-              const refused = number(text, circuit.conductorRadiusM * 2000, (spacingMm) =>
-                change("Spacing", (present) => ({
-                  ...present,
-                  arrangement: { ...arrangement, spacingM: spacingMm / 1000 },
-                })),
-              );
-              return (
-                refused && `At least ${numberText(circuit.conductorRadiusM * 2000)} mm, twice the radius.`
-              );
+              const leastMm = circuit.conductorRadiusM * 2000;
+              const spacingMm = readNumber(text);
+              if (spacingMm === null || spacingMm < leastMm || spacingMm > 1e5)
+                return `At least ${numberText(leastMm)} mm, twice the radius.`;
+              return change("Spacing", (present) => ({
+                ...present,
+                arrangement: { ...arrangement, spacingM: spacingMm / 1000 },
+              }));
             }}
           />
         ) : (
@@ -193,8 +163,10 @@ export function CircuitRow({ circuit }: { circuit: Circuit }) {
             const mostMm = "spacingM" in arrangement ? arrangement.spacingM * 500 : 1000;
             if (radiusMm === null || radiusMm <= 0 || radiusMm > mostMm)
               return `Above 0, up to ${numberText(mostMm)} mm.`;
-            change("Conductor radius", (present) => ({ ...present, conductorRadiusM: radiusMm / 1000 }));
-            return null;
+            return change("Conductor radius", (present) => ({
+              ...present,
+              conductorRadiusM: radiusMm / 1000,
+            }));
           }}
         />
       </td>
