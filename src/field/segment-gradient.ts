@@ -55,6 +55,8 @@ export function addSegmentGradient(
     const lengthA = Math.sqrt(a2);
     const lengthB = Math.sqrt(b2);
     const inner = ax * bx + ay * by + az * bz;
+    // No gradient is told on a line without thickness, nor of a segment without length.
+    if (l2 === 0 || (c2 === 0 && r2 === 0 && inner < 0)) continue;
     const alongL = ax * lx + ay * ly + az * lz;
     const pastStart = alongL < 0;
     const beside = !pastStart && bx * lx + by * ly + bz * lz <= 0;

@@ -104,6 +104,19 @@ describe("addSegmentField", () => {
     expect(magnitude(field(wire, [50.001, 1e-3, 0]))).toBeLessThan(surface);
     expect(magnitude(field(wire, [50, 1e-200, 0]))).toBeLessThan(surface);
   });
+
+  it("gives nothing on the line of a segment without thickness or without length, and leaves the rest as it was", () => {
+    const thin = row([0, 0, 0], [1, 2, 3], 0);
+    const point = row([4, 5, 6], [4, 5, 6]);
+    const rest = row([0, 1, 0], [5, 1, 0]);
+    for (const share of [0, 0.25, 0.5, 1, 1.5, -0.5]) {
+      const at: Vector = [share, 2 * share, 3 * share];
+      expect(field([...thin, ...point, ...rest], at)).toEqual(field(rest, at));
+      expect(gradient([...thin, ...point, ...rest], at).every(Number.isFinite)).toBe(true);
+    }
+    expect(gradient([...thin, ...point, ...rest], [0.5, 1, 1.5])).toEqual(gradient(rest, [0.5, 1, 1.5]));
+    expect(field([...point, ...rest], [4, 5, 6])).toEqual(field(rest, [4, 5, 6]));
+  });
 });
 
 describe("addSegmentGradient", () => {

@@ -16,7 +16,7 @@ const SCALE = MU_0 / (4 * Math.PI);
  * point (Hanson and Hirshman, Phys. Plasmas 9, 4410 (2002)), evaluated so that no digits are lost beside long segments:
  * a × b = ℓ × (shorter of a, b), and where a·b < 0, 1/(|a||b| + a·b) = (|a||b| − a·b)/|a × b|².
  * Nearer to the axis than the radius R the field is that times (ρ² + e²)/R², e the overhang past the segment's end
- * (uniform current density). Zero on the segment's own end points.
+ * (uniform current density). Zero on the segment's own end points, and on its line where it has no thickness or no length.
  */
 export function addSegmentField(
   rows: SegmentRows,
@@ -70,6 +70,8 @@ export function addSegmentField(
       const pastEnd = bx * lx + by * ly + bz * lz > 0;
       const overhang2 = pastStart ? a2 : pastEnd ? b2 : -1;
       inverse = insideInverse(c2, l2, radius * radius, product, inner, overhang2);
+    } else if (c2 === 0) {
+      continue;
     } else {
       inverse = inner < 0 ? (product - inner) / c2 : 1 / (product + inner);
     }
