@@ -17,6 +17,7 @@ export default defineConfig({
         server: entry("./src/server/entries/server.ts"),
         "delivery-worker": entry("./src/server/entries/delivery-worker.ts"),
         migrate: entry("./src/server/entries/migrate.ts"),
+        activity: entry("./scripts/activity/main.ts"),
         organisation: entry("./scripts/organisation/main.ts"),
         screen: entry("./src/screening/command.ts"),
         "screening-worker": entry("./src/workers/screening-worker.ts"),

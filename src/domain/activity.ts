@@ -44,14 +44,17 @@ export const activityEvents = {
 
 export type ActivityEvent = keyof typeof activityEvents;
 
-export type ActivitySubject =
-  | "session"
-  | "member"
-  | "invitation"
-  | "site"
-  | "plan"
-  | "drawing"
-  | "screening"
-  | "notice"
-  | "delivery"
-  | "revision";
+export const activitySubjects = [
+  "session",
+  "member",
+  "invitation",
+  "site",
+  "plan",
+  "drawing",
+  "screening",
+  "notice",
+  "delivery",
+  "revision",
+] as const;
+
+export type ActivitySubject = (typeof activitySubjects)[number];

@@ -20,9 +20,10 @@ import {
   operationsOf,
   referencesIn,
 } from "../fixtures/openapi/document";
+import { keptIds } from "../fixtures/kept";
 import { newMember, newOrganisation, type SignedInMember } from "../fixtures/organisation";
 import { newDraft, newScreenedPlan } from "../fixtures/screenings";
-import { newContact } from "../fixtures/walkers";
+import { newContact, newKeptOf } from "../fixtures/walkers";
 import { endpointWalk } from "../fixtures/walk-table";
 import { startTestApp, type TestApp } from "../support/test-app";
 
@@ -47,7 +48,6 @@ afterAll(() => app.close());
 async function newCaller(): Promise<Caller> {
   const organisation = await newOrganisation("Described Office");
   const member = await newMember(organisation, ["planner", "admin"]);
-  const other = await newMember(organisation, ["planner"]);
   const screened = await newScreenedPlan(member);
   const { plan, screeningId } = screened;
   const bytes = await floorPicture(60, 40).png().toBuffer();
@@ -65,7 +65,7 @@ async function newCaller(): Promise<Caller> {
       noticeId,
       noticeTag: draftTagOf(notice?.coveringText ?? "", []),
       contactId: await newContact(member, plan.siteId),
-      userId: other.userId,
+      ...(await newKeptOf(member, keptIds)),
     },
     ask: as(app, member),
   };

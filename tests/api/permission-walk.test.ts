@@ -2,11 +2,13 @@ import request from "supertest";
 import { afterAll, beforeAll, describe, expect, it } from "vitest";
 import { type Action, permissions } from "../../src/domain/permissions";
 import { pageAction, pageActions } from "../../src/server/http/page-actions";
+import { keptIds } from "../fixtures/kept";
 import { endpointWalk, pageWalk } from "../fixtures/walk-table";
 import {
   expectedOutcome,
   freshCookie,
   newContact,
+  newKeptOf,
   type Objects,
   outcomeOf,
   startWalk,
@@ -60,11 +62,17 @@ async function ask(walker: Walker, method: Method, path: string, body?: Record<s
   return method === "get" ? test : test.send(body ?? {});
 }
 
-/** Objects to name in `address`, with a contact that nobody has removed yet. */
+/** Objects to name in `address`; those that a walk may have removed are new. */
 async function objectsFor(address: string): Promise<Objects> {
-  const { objects, planner } = walk;
-  if (!address.includes("[contactId]")) return objects;
-  return { ...objects, contactId: await newContact(planner, objects.siteId) };
+  const { objects, planner, keeper } = walk;
+  const kept = await newKeptOf(
+    keeper,
+    keptIds.filter((id) => address.includes(`[${id}]`)),
+  );
+  const contact = address.includes("[contactId]") && {
+    contactId: await newContact(planner, objects.siteId),
+  };
+  return { ...objects, ...kept, ...contact };
 }
 
 describe("the walk's table", () => {

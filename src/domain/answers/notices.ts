@@ -1,5 +1,5 @@
 import * as z from "zod";
-import { deliveryStates } from "../delivery";
+import { deliveryKinds, deliveryStates } from "../delivery";
 import { instant } from "./common";
 
 export const issuedAnswer = z.object({ issuedAt: instant, recipients: z.int() });
@@ -11,7 +11,7 @@ export const deliveriesAnswer = z.object({
   deliveries: z.array(
     z.object({
       id: z.uuid(),
-      kind: z.enum(["notice", "sign-in-link"]),
+      kind: z.enum(deliveryKinds),
       recipientName: z.string(),
       email: z.string(),
       state: z.enum(deliveryStates),

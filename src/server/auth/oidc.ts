@@ -12,13 +12,15 @@ import { authorisationUrl, verifiedSubject } from "./provider";
 import { describeFailure, signInProblemOf } from "./provider-failure";
 import { limitRate } from "./rate-limit";
 import { safeReturnTo } from "./return-to";
-import { newToken, sameSecret } from "./secrets";
+import { hashOf, newToken, sameSecret } from "./secrets";
 import { type NextStep, type Proof, signIn } from "./sign-in";
 
 interface Wanted {
   /** Short name; one that is not known is passed over, so that nobody learns which organisations there are. */
   organisation?: string | undefined;
   returnTo?: string | undefined;
+  /** Token of the invitation that is to be accepted with the identity. */
+  invitation?: string | undefined;
   /** Whether the person has to prove anew who they are. */
   fresh?: boolean | undefined;
 }
@@ -40,7 +42,7 @@ export async function startSignIn(cookies: AstroCookies, wanted: Wanted): Promis
     organisationId: organisation?.id ?? null,
     returnTo: safeReturnTo(wanted.returnTo),
     subject: null,
-    invitationLinkId: null,
+    invitationLinkId: wanted.invitation === undefined ? null : hashOf(wanted.invitation),
     authenticatedAt: null,
     wantsFresh: wanted.fresh ?? false,
   });
@@ -77,6 +79,10 @@ export async function finishSignIn(cookies: AstroCookies, answer: ProviderAnswer
   } catch (error) {
     log().warn({ failure: describeFailure(error) }, "sign-in not confirmed by the provider");
     return { problem: signInProblemOf(error) };
+  }
+  if (pending.invitationLinkId !== null) {
+    await keepPending(db(), cookies, { ...pending, ...proven });
+    return { goTo: "/invitations/confirm" };
   }
   const people = (await findByIdentity(db(), env().oidc.issuer, proven.subject)).filter(
     (person) => pending.organisationId === null || person.organisationId === pending.organisationId,

@@ -10,12 +10,11 @@ const rates = {
   "sign-in": { limit: 10, windowMs: minuteMs },
   "sign-in-return": { limit: 10, windowMs: minuteMs },
   "sign-in-mail": { limit: 5, windowMs: 60 * minuteMs },
+  invitation: { limit: 40, windowMs: 60 * minuteMs },
+  "invitation-mail": { limit: 3, windowMs: 60 * minuteMs },
 } as const satisfies Record<string, RateLimit>;
 
 export type LimitedDeed = keyof typeof rates;
-
-/** No window is looked at after this time. */
-export const longestWindowMs = Math.max(...Object.values(rates).map((rate) => 2 * rate.windowMs));
 
 /**
  * Counts an attempt at `deed` by `key` (an address, a network, a pending sign-in; stored as a hash).

@@ -2,13 +2,15 @@ import { z } from "zod";
 import { Refusal } from "~/domain/errors";
 import { maySeeSite, type Member } from "~/domain/permissions";
 import { db } from "../db/client";
+import { findDelivery } from "../db/queries/deliveries";
 import { findDrawing } from "../db/queries/drawings";
+import { findInvitation } from "../db/queries/invitations";
 import { findNotice } from "../db/queries/notices";
-import { findMember } from "../db/queries/people";
-import { findPlan } from "../db/queries/plans";
+import { findFormerMember, findMember } from "../db/queries/people";
+import { findArchivedPlan, findPlan } from "../db/queries/plans";
 import { findRevision } from "../db/queries/revisions";
 import { findScreening } from "../db/queries/screenings";
-import { findContact, findSite } from "../db/queries/sites";
+import { findArchivedSite, findContact, findSite } from "../db/queries/sites";
 
 type Found<F extends (...args: never[]) => Promise<unknown>> = NonNullable<Awaited<ReturnType<F>>>;
 
@@ -22,6 +24,11 @@ export interface Scope {
   notice?: Found<typeof findNotice>;
   revision?: Found<typeof findRevision>;
   person?: Found<typeof findMember>;
+  formerMember?: Found<typeof findFormerMember>;
+  invitation?: Found<typeof findInvitation>;
+  delivery?: Found<typeof findDelivery>;
+  archivedSite?: Found<typeof findArchivedSite>;
+  archivedPlan?: Found<typeof findArchivedPlan>;
 }
 
 const uuid = z.uuid();
@@ -68,6 +75,16 @@ export async function resolveScope(member: Member, params: Partial<Record<string
     scope.revision = found(await findRevision(db(), organisationId, scope.plan.id, id("revisionId")));
   if (params["userId"] !== undefined)
     scope.person = found(await findMember(db(), organisationId, id("userId")));
+  if (params["formerId"] !== undefined)
+    scope.formerMember = found(await findFormerMember(db(), organisationId, id("formerId")));
+  if (params["invitationId"] !== undefined)
+    scope.invitation = found(await findInvitation(db(), organisationId, id("invitationId")));
+  if (params["deliveryId"] !== undefined)
+    scope.delivery = found(await findDelivery(db(), organisationId, id("deliveryId")));
+  if (params["archivedSiteId"] !== undefined)
+    scope.archivedSite = found(await findArchivedSite(db(), organisationId, id("archivedSiteId")));
+  if (params["archivedPlanId"] !== undefined)
+    scope.archivedPlan = found(await findArchivedPlan(db(), organisationId, id("archivedPlanId")));
   return scope;
 }
 

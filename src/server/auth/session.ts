@@ -27,7 +27,7 @@ export async function principalOf(cookies: AstroCookies, now = new Date()): Prom
   const token = readCookie(cookies, sessionCookieName());
   if (token === null) return nobody;
   const found = await findSession(db(), hashOf(token));
-  if (found === undefined || sessionHasEnded(found.session, now)) {
+  if (found === undefined || found.person.removedAt !== null || sessionHasEnded(found.session, now)) {
     if (found !== undefined) await deleteSession(db(), found.session.id);
     removeCookie(cookies, sessionCookieName());
     return nobody;

@@ -77,7 +77,7 @@ export async function redeemSignInLink(db: Queryable, token: string, now = new D
   if (link === undefined) return { problem: "link-unusable" };
   if (!taken) return { problem: link.usedAt === null ? "link-expired" : "link-used" };
   const person = await findUser(db, link.userId);
-  return person === undefined
+  return person === undefined || person.removedAt !== null
     ? { problem: "link-unusable" }
     : { userId: person.id, organisationId: person.organisationId, by: "link", authenticatedAt: new Date() };
 }

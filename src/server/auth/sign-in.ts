@@ -8,7 +8,7 @@ import { hashOf } from "./secrets";
 import { createSession, giveSessionCookie } from "./session";
 
 /** Who somebody has proved to be and by what, or why they have not. */
-export type Proof =
+export type Proof<P extends string = SignInProblem> =
   | {
       userId: string;
       organisationId: string;
@@ -16,7 +16,7 @@ export type Proof =
       /** When they proved it; null where the provider does not say. */
       authenticatedAt?: Date | null;
     }
-  | { problem: SignInProblem };
+  | { problem: P };
 
 /** A proof of unknown age does not pass for a fresh one. */
 const longAgo = new Date(0);
@@ -29,10 +29,10 @@ export type NextStep = { goTo: string } | { problem: SignInProblem };
  * had before ends.
  * @returns the problem when there is no proof, otherwise null
  */
-export async function signIn(
+export async function signIn<P extends string = SignInProblem>(
   cookies: AstroCookies,
-  prove: (tx: Queryable) => Promise<Proof>,
-): Promise<SignInProblem | null> {
+  prove: (tx: Queryable) => Promise<Proof<P>>,
+): Promise<P | null> {
   const before = readCookie(cookies, sessionCookieName());
   const outcome = await db().transaction(async (tx) => {
     const proof = await prove(tx);

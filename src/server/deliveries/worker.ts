@@ -1,16 +1,13 @@
 import { setTimeout as pause } from "node:timers/promises";
-import { purgeExpired } from "../auth/purge";
-import { db } from "../db/client";
-import { deleteSettledSignInDeliveries } from "../db/queries/deliveries";
 import { errorReport } from "../error-report";
 import { log } from "../log";
 import { openMailTransport } from "../mail/transport";
+import { purgeByRetention } from "../retention/purge";
 import { deliverNext } from "./deliver";
 
 const pollMs = 1_500;
 const longestPauseMs = 60_000;
 const purgeEveryMs = 60 * 60_000;
-const signInMemoryMs = 7 * 24 * 60 * 60_000;
 
 /**
  * Sends what waits in the outbox, one message after the other, until `signal` is aborted; the message in hand is
@@ -25,8 +22,7 @@ export async function runDeliveryWorker({ signal }: { signal: AbortSignal }): Pr
     while (!isStopping()) {
       try {
         if (Date.now() >= purgeAtMs) {
-          await deleteSettledSignInDeliveries(db(), new Date(Date.now() - signInMemoryMs));
-          await purgeExpired();
+          await purgeByRetention();
           purgeAtMs = Date.now() + purgeEveryMs;
         }
         while (!isStopping() && (await deliverNext(transport)));

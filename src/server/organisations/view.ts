@@ -1,21 +1,24 @@
 import type { Member } from "~/domain/permissions";
+import { headOf } from "../activity/view";
 import { db } from "../db/client";
-import { listActivity } from "../db/queries/activity";
-import { listDeliveries } from "../db/queries/deliveries";
 import { findOrganisation } from "../db/queries/organisations";
-import { listMembers } from "../db/queries/people";
+import { listAssignments, listFormerMembers, listMembers } from "../db/queries/people";
+import { listSites } from "../db/queries/sites";
 
-const deliveriesShown = 100;
-const activityShown = 100;
-
-/** The member's organisation with its people and the newest of its deliveries and of its activity. */
+/** The member's organisation with its people, its sites to assign them to, and the head of its activity log. */
 export async function organisationView({ organisationId }: Member) {
   const organisation = await findOrganisation(db(), organisationId);
   if (organisation === undefined) throw new Error("A member's organisation is not there.");
+  const assignments = await listAssignments(db(), organisationId);
+  const members = await listMembers(db(), organisationId);
   return {
     organisation,
-    members: await listMembers(db(), organisationId),
-    deliveries: await listDeliveries(db(), organisationId, deliveriesShown),
-    activity: await listActivity(db(), organisationId, activityShown),
+    members: members.map((member) => ({
+      ...member,
+      siteIds: assignments.filter(({ userId }) => userId === member.userId).map(({ siteId }) => siteId),
+    })),
+    formerMembers: await listFormerMembers(db(), organisationId),
+    sites: await listSites(db(), organisationId, null),
+    head: await headOf(organisationId),
   };
 }

@@ -62,20 +62,26 @@ export async function removeObject(key: string): Promise<void> {
   }
 }
 
-/** Every key that begins with `prefix`. @throws Refusal service.unavailable */
-export async function listObjectKeys(prefix: string): Promise<string[]> {
-  const keys: string[] = [];
+/** Every object whose key begins with `prefix`, and when it was stored. @throws Refusal service.unavailable */
+export async function listObjects(prefix: string): Promise<{ key: string; storedAt: Date }[]> {
+  const objects: { key: string; storedAt: Date }[] = [];
   try {
     for await (const page of paginateListObjectsV2(
       { client: storageClient() },
       { Bucket: bucket(), Prefix: prefix },
     ))
-      for (const { Key } of page.Contents ?? []) if (Key !== undefined) keys.push(Key);
+      for (const { Key, LastModified } of page.Contents ?? [])
+        if (Key !== undefined && LastModified !== undefined)
+          objects.push({ key: Key, storedAt: LastModified });
   } catch (cause) {
     throw unavailable(cause);
   }
-  return keys;
+  return objects;
 }
+
+/** Every key that begins with `prefix`. @throws Refusal service.unavailable */
+export const listObjectKeys = async (prefix: string): Promise<string[]> =>
+  (await listObjects(prefix)).map(({ key }) => key);
 
 /** Makes the bucket where it is missing. @throws Refusal service.unavailable */
 export async function ensureBucket(): Promise<void> {

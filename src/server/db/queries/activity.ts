@@ -1,4 +1,4 @@
-import { and, asc, desc, eq, gt, gte, lt } from "drizzle-orm";
+import { and, asc, desc, eq, getTableColumns, gt, gte, isNull, lt } from "drizzle-orm";
 import { alias } from "drizzle-orm/mysql-core";
 import type { Queryable } from "../client";
 import { activityHeads, activityLog, users } from "../schema/people";
@@ -42,7 +42,8 @@ export async function findHead(db: Queryable, organisationId: string) {
 
 /** What lines are looked for; whatever is left out matches all. */
 export interface ActivityFilter {
-  actorId?: string | undefined;
+  /** Null for what the service itself did. */
+  actorId?: string | null | undefined;
   event?: string | undefined;
   subjectKind?: string | undefined;
   subjectId?: string | undefined;
@@ -55,7 +56,11 @@ export interface ActivityFilter {
 const matching = (organisationId: string, filter: ActivityFilter) =>
   and(
     eq(activityLog.organisationId, organisationId),
-    filter.actorId === undefined ? undefined : eq(activityLog.actorId, filter.actorId),
+    filter.actorId === undefined
+      ? undefined
+      : filter.actorId === null
+        ? isNull(activityLog.actorId)
+        : eq(activityLog.actorId, filter.actorId),
     filter.event === undefined ? undefined : eq(activityLog.event, filter.event),
     filter.subjectKind === undefined ? undefined : eq(activityLog.subjectKind, filter.subjectKind),
     filter.subjectId === undefined ? undefined : eq(activityLog.subjectId, filter.subjectId),
@@ -99,6 +104,23 @@ export async function listActivity(
       ),
     )
     .orderBy(desc(activityLog.sequence))
+    .limit(limit);
+}
+
+/** Lines that match, the oldest first, from after `sequence` on. */
+export async function activityAfter(
+  db: Queryable,
+  organisationId: string,
+  filter: ActivityFilter,
+  sequence: number,
+  limit: number,
+) {
+  return db
+    .select({ ...getTableColumns(activityLog), actorName: users.name })
+    .from(activityLog)
+    .leftJoin(users, eq(users.id, activityLog.actorId))
+    .where(and(matching(organisationId, filter), gt(activityLog.sequence, sequence)))
+    .orderBy(asc(activityLog.sequence))
     .limit(limit);
 }
 

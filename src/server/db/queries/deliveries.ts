@@ -1,8 +1,10 @@
-import { and, asc, desc, eq, inArray, isNull, lt, lte, or } from "drizzle-orm";
-import type { DeliveryState } from "~/domain/delivery";
+import { and, asc, desc, eq, inArray, isNull, lt, lte, or, sql } from "drizzle-orm";
+import type { DeliveryKind, DeliveryState } from "~/domain/delivery";
 import type { Queryable } from "../client";
+import { invitations } from "../schema/invitations";
 import { deliveries, noticeRecipients, notices } from "../schema/notices";
 import { users } from "../schema/people";
+import { screenings } from "../schema/plans";
 import { revisionMails } from "../schema/revisions";
 
 export type DeliveryRow = typeof deliveries.$inferSelect;
@@ -67,6 +69,32 @@ export async function settleDelivery(
   return affectedRows === 1;
 }
 
+export async function findDelivery(db: Queryable, organisationId: string, deliveryId: string) {
+  const [row] = await db
+    .select()
+    .from(deliveries)
+    .where(and(eq(deliveries.organisationId, organisationId), eq(deliveries.id, deliveryId)));
+  return row;
+}
+
+/** As `findDelivery`; workers pass the row over until the end of the transaction. */
+export async function lockDelivery(tx: Queryable, organisationId: string, deliveryId: string) {
+  const [row] = await tx
+    .select()
+    .from(deliveries)
+    .where(and(eq(deliveries.organisationId, organisationId), eq(deliveries.id, deliveryId)))
+    .for("update");
+  return row;
+}
+
+export async function updateDelivery(
+  tx: Queryable,
+  deliveryId: string,
+  change: Partial<Pick<DeliveryRow, "state" | "nextAttemptAt" | "claimedUntil">>,
+): Promise<void> {
+  await tx.update(deliveries).set(change).where(eq(deliveries.id, deliveryId));
+}
+
 const shown = {
   id: deliveries.id,
   kind: deliveries.kind,
@@ -88,33 +116,50 @@ export async function listNoticeDeliveries(db: Queryable, organisationId: string
     .orderBy(asc(noticeRecipients.name), asc(noticeRecipients.email));
 }
 
+interface Looked {
+  state?: DeliveryState | undefined;
+  kind?: DeliveryKind | undefined;
+  /** Part of the recipient's name or address. */
+  to?: string | undefined;
+}
+
 /** An organisation's messages, the newest first; the address of a sign-in message is its person's. */
-export async function listDeliveries(db: Queryable, organisationId: string, limit: number) {
-  const rows = await db
+export async function listDeliveries(
+  db: Queryable,
+  organisationId: string,
+  limit: number,
+  { state, kind, to }: Looked = {},
+) {
+  const recipientName = sql<string>`coalesce(${noticeRecipients.name}, ${users.name}, ${invitations.name}, ${revisionMails.toName}, '')`;
+  const email = sql<string>`coalesce(${noticeRecipients.email}, ${users.email}, ${invitations.email}, ${revisionMails.toEmail}, '')`;
+  return db
     .select({
       ...shown,
       noticeId: noticeRecipients.noticeId,
       screeningId: notices.screeningId,
-      recipientName: noticeRecipients.name,
-      recipientEmail: noticeRecipients.email,
-      userName: users.name,
-      userEmail: users.email,
-      mailName: revisionMails.toName,
-      mailEmail: revisionMails.toEmail,
+      planId: screenings.planId,
+      recipientName,
+      email,
     })
     .from(deliveries)
     .leftJoin(noticeRecipients, eq(noticeRecipients.id, deliveries.recipientId))
     .leftJoin(notices, eq(notices.id, noticeRecipients.noticeId))
+    .leftJoin(screenings, eq(screenings.id, notices.screeningId))
     .leftJoin(users, eq(users.id, deliveries.userId))
+    .leftJoin(invitations, eq(invitations.id, deliveries.invitationId))
     .leftJoin(revisionMails, eq(revisionMails.id, deliveries.revisionMailId))
-    .where(eq(deliveries.organisationId, organisationId))
+    .where(
+      and(
+        eq(deliveries.organisationId, organisationId),
+        state === undefined ? undefined : eq(deliveries.state, state),
+        kind === undefined ? undefined : eq(deliveries.kind, kind),
+        to === undefined
+          ? undefined
+          : or(sql`instr(${recipientName}, ${to}) > 0`, sql`instr(${email}, ${to}) > 0`),
+      ),
+    )
     .orderBy(desc(deliveries.createdAt), desc(deliveries.id))
     .limit(limit);
-  return rows.map(({ recipientEmail, userName, userEmail, mailName, mailEmail, recipientName, ...row }) => ({
-    ...row,
-    recipientName: recipientName ?? userName ?? mailName ?? "",
-    email: recipientEmail ?? userEmail ?? mailEmail ?? "",
-  }));
 }
 
 /** Forgets sign-in messages that are done with; a notice's messages stay with the notice. */

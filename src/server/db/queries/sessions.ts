@@ -13,7 +13,13 @@ export async function findSession(db: Queryable, sessionId: string) {
   const [row] = await db
     .select({
       session: sessions,
-      person: { id: users.id, organisationId: users.organisationId, name: users.name, email: users.email },
+      person: {
+        id: users.id,
+        organisationId: users.organisationId,
+        name: users.name,
+        email: users.email,
+        removedAt: users.removedAt,
+      },
     })
     .from(sessions)
     .innerJoin(users, eq(users.id, sessions.userId))

@@ -53,3 +53,7 @@ export async function findSignInLink(db: Queryable, id: string) {
 export async function deleteExpiredSignInLinks(db: Queryable, now: Date): Promise<void> {
   await db.delete(signInLinks).where(lt(signInLinks.expiresAt, now));
 }
+
+export async function deleteSignInLinksOf(db: Queryable, userId: string): Promise<void> {
+  await db.delete(signInLinks).where(eq(signInLinks.userId, userId));
+}

@@ -1,4 +1,4 @@
-import { and, asc, eq, inArray, isNull } from "drizzle-orm";
+import { and, asc, desc, eq, inArray, isNotNull, isNull } from "drizzle-orm";
 import type { Queryable } from "../client";
 import { siteContacts, sites } from "../schema/plans";
 
@@ -28,6 +28,43 @@ export async function listSites(db: Queryable, organisationId: string, siteIds: 
       ),
     )
     .orderBy(asc(sites.name));
+}
+
+/** A site that was put away. */
+export async function findArchivedSite(db: Queryable, organisationId: string, siteId: string) {
+  const [row] = await db
+    .select()
+    .from(sites)
+    .where(and(eq(sites.organisationId, organisationId), eq(sites.id, siteId), isNotNull(sites.archivedAt)));
+  return row;
+}
+
+export async function listArchivedSites(db: Queryable, organisationId: string) {
+  return db
+    .select({ id: sites.id, name: sites.name, place: sites.place, archivedAt: sites.archivedAt })
+    .from(sites)
+    .where(and(eq(sites.organisationId, organisationId), isNotNull(sites.archivedAt)))
+    .orderBy(desc(sites.archivedAt), asc(sites.id));
+}
+
+/** @returns false when it is so already */
+export async function archiveSiteRow(
+  tx: Queryable,
+  organisationId: string,
+  siteId: string,
+  archivedAt: Date | null,
+): Promise<boolean> {
+  const [{ affectedRows }] = await tx
+    .update(sites)
+    .set({ archivedAt })
+    .where(
+      and(
+        eq(sites.organisationId, organisationId),
+        eq(sites.id, siteId),
+        archivedAt === null ? isNotNull(sites.archivedAt) : isNull(sites.archivedAt),
+      ),
+    );
+  return affectedRows === 1;
 }
 
 export async function insertSite(db: Queryable, row: typeof sites.$inferInsert): Promise<void> {
