@@ -1,6 +1,6 @@
 import * as z from "zod";
 import { circuit, route } from "./plan-document/circuit";
-import { identifier, name, point } from "./plan-document/quantities";
+import { identifier, point } from "./plan-document/quantities";
 import type { PlanDocument } from "./plan-document/plan-document";
 import { verdictSchema } from "./screening-result";
 
@@ -97,7 +97,7 @@ const standing = z.strictObject({ verdict: verdictSchema, budgetUsed: z.number()
  */
 const singleChange = z.strictObject({
   kind: z.enum(CHANGE_KINDS),
-  words: name,
+  words: z.string(),
   /** Circuits and routes that it touches. */
   ids: z.array(identifier),
   patch: planPatchSchema,

@@ -4,6 +4,8 @@ import type { Steps } from "../../steps";
 /** Up to so many combinations are all tried. */
 export const MAX_COMBINATIONS = 20_000;
 const RANDOM_STARTS = 6;
+/** Beyond so many places pairs would be too many, and one place is changed at a time. */
+const PAIRED_PLACES = 16;
 const ROOT_3 = Math.sqrt(3);
 /** How many costs are asked for between two steps. */
 const SLICE = 200;
@@ -89,6 +91,7 @@ function* descend(
 function* neighbours(choice: readonly number[], options: number): Generator<number[][]> {
   const all = Array.from({ length: options }, (_, option) => option);
   for (let one = 0; one < choice.length; one++) yield all.map((option) => choice.with(one, option));
+  if (choice.length > PAIRED_PLACES) return;
   for (let one = 0; one < choice.length; one++) {
     for (let other = one + 1; other < choice.length; other++) {
       yield all.flatMap((first) => all.map((second) => choice.with(one, first).with(other, second)));

@@ -67,7 +67,7 @@ function proposalOf(
       : `Connect the circuits that share a way in the phase orders ${orders.join(", ")}${note}`;
   return {
     kind: "phase-orders",
-    words: words.slice(0, 300),
+    words,
     ids: group.map(({ id }) => id),
     patch: { circuits: changed, routes: [] },
     movesSingles: false,
