@@ -1,3 +1,4 @@
+import { MAX_SEGMENTS } from "~/domain/plan-document/load";
 import type { DocumentFault } from "~/domain/plan-document/parse";
 import type { ResolvedCircuit, ResolvedPlanDocument } from "~/domain/plan-document/resolved";
 import { boundItems, type BoundItem } from "./bounds";
@@ -9,7 +10,6 @@ import { routeLines, type RouteLines } from "./route-lines";
 import type { Drive, SourceItem } from "./source-item";
 import { sectionFrames } from "~/field/section-frames";
 
-export const MAX_SEGMENTS = 200_000;
 /** Most contributions that one result lists: beyond it neither JSON nor memory holds it. */
 export const MAX_RESULT_ENTRIES = 2_000_000;
 

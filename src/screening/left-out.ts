@@ -1,11 +1,12 @@
-/** What the model leaves out, said with every result. */
+import { cautions } from "~/domain/cautions";
+
+/** What the model leaves out, said with every result. The product's cautions are part of it. */
 export const LEFT_OUT: readonly string[] = [
   "Only the sources drawn are in it.",
   "Steel (building frame, conduit, racks, reinforcement, passing vehicles, lifts) is not modelled; it can raise as well as lower the field.",
   "Currents induced in cable sheaths and metalwork are not modelled.",
   "A shielding factor is the user's own assertion and is applied as given.",
-  "This is no assessment of human exposure or of implanted medical devices.",
-  "Local codes, makers' instructions and a licensed engineer decide; readings taken on site outrank this result.",
+  ...cautions,
 ];
 
 /** The standing list and, where one is asserted, every shielding factor with its owner. */

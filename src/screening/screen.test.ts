@@ -1,4 +1,5 @@
 import { describe, expect, it } from "vitest";
+import { cautions } from "~/domain/cautions";
 import { parsePlanDocument } from "~/domain/plan-document/parse";
 import type { PlanDocumentInput } from "~/domain/plan-document/plan-document";
 import { screeningResultSchema, type Finding } from "~/domain/screening-result";
@@ -183,6 +184,8 @@ describe("screen", () => {
         {},
       ),
     );
+    expect(result.checks.warnings.join()).not.toMatch(/way back/);
+    expect(result.leftOut).toEqual(expect.arrayContaining([...cautions]));
     expect(result.checks.openEnds).toEqual([
       { at: [0, 0, 0], currentA: 10, circuitIds: ["c1"] },
       { at: [12, 6, 2], currentA: 10, circuitIds: ["c1"] },

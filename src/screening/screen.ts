@@ -1,7 +1,7 @@
 import type { PlanDocument } from "~/domain/plan-document/plan-document";
 import { worstVerdict, type ScreeningResult, type SensorResult } from "~/domain/screening-result";
 import { circulationError } from "./checks/circulation-check";
-import { openEnds, openEndText } from "./checks/open-ends";
+import { openEnds } from "./checks/open-ends";
 import type { WaitingCircuit } from "./compile";
 import { earthWarnings } from "./earth";
 import { ENGINE_VERSION } from "./engine-version";
@@ -34,7 +34,6 @@ export function* screenSteps(document: PlanDocument): Steps<ScreeningResult> {
   }
   yield { done: sensors.length, total: sensors.length };
 
-  const ends = openEnds(plan);
   return {
     format: "stillneedle-result",
     version: 1,
@@ -45,8 +44,8 @@ export function* screenSteps(document: PlanDocument): Steps<ScreeningResult> {
     sensors,
     checks: {
       circulationError: circulationError(plan),
-      openEnds: ends,
-      warnings: [...warnings, ...ends.map(openEndText)],
+      openEnds: openEnds(plan),
+      warnings,
     },
     leftOut: leftOut(resolved),
   };

@@ -32,11 +32,6 @@ export function openEnds(plan: CompiledPlan): OpenEnd[] {
   });
 }
 
-export function openEndText({ at, currentA, circuitIds }: OpenEnd): string {
-  const place = at.map((c) => Number(c.toFixed(3))).join(", ");
-  return `${Number(currentA.toPrecision(3))} A leave at (${place}) and no way back is drawn (${circuitIds.join(", ")}).`;
-}
-
 /** Path ends by place, in the document's order; found through a grid so that many circuits stay cheap. */
 function meetings(plan: CompiledPlan): End[][] {
   const clusters: End[][] = [];

@@ -1,6 +1,7 @@
-import { cautions } from "~/domain/cautions";
+import { cautions, leftOutBesideCautions } from "~/domain/cautions";
 import {
   formatBudget,
+  formatCurrent,
   formatLength,
   formatLimit,
   formatQuantity,
@@ -106,8 +107,8 @@ export function noticeContent(source: NoticeSource): NoticeContent {
         ? [`${counted(waiting.length - most.waiting, "more circuit", "more circuits")}; the page lists them`]
         : []),
     ],
-    checks: checkWords(result, waiting),
-    leftOut: result.leftOut.map(oneLine),
+    checks: checkWords(result, waiting, nameOf),
+    leftOut: leftOutBesideCautions(result.leftOut).map(oneLine),
     cautions,
     resultUrl: source.resultUrl,
     origin: [
@@ -167,13 +168,22 @@ function withinWords({ sensor, governing }: Position): string {
   return `${sensorName(sensor)}${used}`;
 }
 
-/** The engine's warnings but for the circuits that wait, which stand in a list of their own. */
-function checkWords({ checks }: ScreeningResult, waiting: readonly WaitingCircuit[]): string[] {
-  const lines = checks.warnings
+/** Where currents do not come back, then the engine's warnings but for the circuits that wait, which stand in a list of their own. */
+function checkWords(
+  { checks }: ScreeningResult,
+  waiting: readonly WaitingCircuit[],
+  nameOf: (id: string) => string,
+): string[] {
+  const ends = checks.openEnds.map(
+    ({ at, currentA, circuitIds }) =>
+      `${formatCurrent(currentA)} leave at ${placeWords(at)} and no way back is drawn (${circuitIds.map(nameOf).join(", ")}).`,
+  );
+  const warnings = checks.warnings
     .filter(
       (line) => !waiting.some(({ circuit }) => line.startsWith(`Circuit "${circuit.name}" (${circuit.id}) `)),
     )
     .map(oneLine);
+  const lines = [...ends, ...warnings];
   const more = lines.length - most.checks;
   return more > 0 ? [...lines.slice(0, most.checks), `${String(more)} more; the page lists them`] : lines;
 }

@@ -48,7 +48,7 @@ describe("a screening notice", () => {
       expect(form).toContain("Bench 7, 4.0 % of its budget used");
       expect(form).toContain("Riser 2: not traced yet, its current is not known");
       expect(form).not.toContain("no verdict is better than undecided");
-      expect(form).toContain("120 A leave at (12, 0, 2.8) and no way back is drawn.");
+      expect(form).toContain("120 A leave at x 12.00 m, y 0.00 m, height 2.80 m and no way back is drawn (");
       expect(form).toContain("Readings taken on site outrank this result.");
       expect(form).toContain("Steel is not modelled.");
       expect(form).toContain("1 December 2026 at 12:20 (Europe/Berlin)");
