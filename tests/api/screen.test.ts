@@ -71,6 +71,29 @@ describe("POST /api/screen", () => {
     expect(await isFree(member.userId)).toBe(true);
   });
 
+  it(
+    "tells the first of a flood of faults, of depths and of sizes, and goes on answering",
+    { timeout: 60_000 },
+    async () => {
+      const send = (text: string) =>
+        as(app, member)("post", "/api/screen").set("Content-Type", "application/json").send(text);
+      const sensor = `{"limits":[${"1,".repeat(1900)}1]}`;
+      const flood = await send(`{"sensors":[${Array.from({ length: 5000 }, () => sensor).join(",")}]}`);
+      expect([flood.status, flood.body.error.faults.length]).toEqual([422, 201]);
+      expect(flood.body.error.faults.at(-1).message).toMatch(/^and at least \d+ more faults/);
+      const deep = await send(`{"drawing":${"[".repeat(100_000)}${"]".repeat(100_000)}}`);
+      expect([deep.status, deep.body.error.faults[0].message]).toEqual([
+        422,
+        "is nested deeper than 100 levels",
+      ]);
+      const long = await send(`{"circuits":[${"{},".repeat(1_000_000)}{}]}`);
+      expect(long.body.error.faults).toEqual([
+        { path: "circuits", message: "1000001 of them; at most 5000 circuits. Split the plan by area" },
+      ]);
+      expect((await screen(screenablePlan())).status).toBe(200);
+    },
+  );
+
   it("needs an account, JSON, and at most 20 MB", async () => {
     const path = "/api/screen";
     const anonymous = { ...member, cookie: "session=none" };
