@@ -1,3 +1,4 @@
+import type { Clearing, ClearingRequest } from "~/domain/clearing";
 import type { PlanDocument } from "~/domain/plan-document/plan-document";
 import type { ScreeningResult } from "~/domain/screening-result";
 import { createScreeningClient, type ScreeningClient } from "~/workers/browser";
@@ -16,6 +17,20 @@ async function settled<T>(promise: Promise<T>): Promise<Outcome<T>> {
   } catch (failed) {
     if (!(failed instanceof ScreeningFailedError)) throw failed;
     return { kind: "refused", message: failed.message, faults: failed.faults };
+  }
+}
+
+/** What would clear flagged sensors, worked out in a worker of its own that ends with the answer or the signal. */
+export async function askClearing(
+  document: PlanDocument,
+  request: ClearingRequest,
+  signal: AbortSignal,
+): Promise<Outcome<Clearing>> {
+  const client = createScreeningClient();
+  try {
+    return await settled(client.clearing(document, request, signal));
+  } finally {
+    client.dispose();
   }
 }
 

@@ -1,4 +1,5 @@
 import type { PlanDocument } from "~/domain/plan-document/plan-document";
+import { aidsOf, distanceToAidM } from "./edits/aids";
 import { ownedPaths, pathOf, type PathOwner } from "./edits/paths";
 import { distanceM, flatOf, nearestLeg, type Point2 } from "./geometry";
 import { itemOfPath, selectedOwners, type SelectedItem, type Selection } from "./selection";
@@ -67,7 +68,7 @@ function hitLeg(document: PlanDocument, pointM: Point2, reachM: number): Leg | n
   return nearest;
 }
 
-/** What lies under the pointer: a sensor or equipment, else a vertex of what is selected, else the nearest route or circuit. */
+/** What lies under the pointer: a sensor or equipment, else a vertex of what is selected, else the nearest route or circuit, else what is drawn to work by. */
 export function hitAt(
   document: PlanDocument,
   selection: Selection,
@@ -81,5 +82,7 @@ export function hitAt(
   const vertex = hitVertex(document, selection, pointM, reachM);
   if (vertex !== null) return { item: vertex, leg: null };
   const leg = hitLeg(document, pointM, reachM);
-  return leg === null ? null : { item: itemOfPath(document, leg.owner), leg };
+  if (leg !== null) return { item: itemOfPath(document, leg.owner), leg };
+  const aid = aidsOf(document).find((drawn) => distanceToAidM(drawn, pointM) <= reachM);
+  return aid === undefined ? null : { item: { kind: "aid", aid: aid.kind, id: aid.id }, leg: null };
 }

@@ -1,4 +1,5 @@
 import type { PlanDocument } from "~/domain/plan-document/plan-document";
+import { aidOf, type AidKind } from "./edits/aids";
 import { circuitsOn, ownerOfCircuit, pathOf, sameOwner, type PathOwner } from "./edits/paths";
 
 export type SelectedItem =
@@ -6,6 +7,7 @@ export type SelectedItem =
   | { kind: "equipment"; id: string }
   | { kind: "circuit"; id: string }
   | { kind: "route"; id: string }
+  | { kind: "aid"; aid: AidKind; id: string }
   | { kind: "vertex"; owner: PathOwner; index: number };
 
 export type Selection = readonly SelectedItem[];
@@ -13,7 +15,9 @@ export type Selection = readonly SelectedItem[];
 export const sameItem = (a: SelectedItem, b: SelectedItem): boolean =>
   a.kind === "vertex"
     ? b.kind === "vertex" && a.index === b.index && sameOwner(a.owner, b.owner)
-    : b.kind !== "vertex" && a.kind === b.kind && a.id === b.id;
+    : b.kind !== "vertex" && a.kind === b.kind && a.id === b.id && aidKindOf(a) === aidKindOf(b);
+
+const aidKindOf = (item: SelectedItem): AidKind | null => (item.kind === "aid" ? item.aid : null);
 
 export const isSelected = (selection: Selection, item: SelectedItem): boolean =>
   selection.some((other) => sameItem(other, item));
@@ -49,6 +53,7 @@ function ownerOfItem(document: PlanDocument, item: SelectedItem): PathOwner | nu
 export function stillThere(document: PlanDocument, selection: Selection): Selection {
   const kept = selection.filter((item) => {
     if (item.kind === "vertex") return pathOf(document, item.owner)?.[item.index] !== undefined;
+    if (item.kind === "aid") return aidOf(document, item.aid, item.id) !== undefined;
     const list = {
       sensor: document.sensors,
       equipment: document.equipment,

@@ -1,5 +1,6 @@
 import type { PlanDocument } from "~/domain/plan-document/plan-document";
 import { distanceM, tidyM, type Point2 } from "./geometry";
+import type { Selection } from "./selection";
 import { toPlan, type SizePx, type View } from "./view";
 
 /** Where a vertical slice stands: places along it are metres from `origin` in the direction `along`, of length 1. */
@@ -16,6 +17,15 @@ export interface Slice {
 
 /** What the slice was asked to go through. */
 export type SliceThrough = { kind: "sensor" | "section-line"; id: string } | null;
+
+/** What a selection asks the section to go through; null where it asks for nothing. */
+export function slicedBy(selection: Selection): SliceThrough {
+  for (const item of selection) {
+    if (item.kind === "sensor") return { kind: "sensor", id: item.id };
+    if (item.kind === "aid" && item.aid === "section-line") return { kind: "section-line", id: item.id };
+  }
+  return null;
+}
 
 /** Metres along the slice, seen from above. */
 export const alongM = ({ origin, along }: Slice, [x, y]: Point2): number =>

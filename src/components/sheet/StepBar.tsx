@@ -1,5 +1,6 @@
 import { Button } from "~/components/ui/Button";
 import { SENSOR_KINDS } from "~/domain/catalogue";
+import { beginDrawAid, drawnBy } from "~/sheet/steps/draw-aid";
 import { beginMeasure } from "~/sheet/steps/measure";
 import { beginPlaceEquipment } from "~/sheet/steps/place-equipment";
 import { beginPlaceSensor } from "~/sheet/steps/place-sensor";
@@ -33,6 +34,8 @@ export function beginStep(store: SheetStore, name: StepName, traceFor: TraceFor 
         ),
       );
     }
+    const aid = drawnBy(name);
+    if (aid !== null) return beginDrawAid(aid, aid === "loop" ? usualTrayM : 0);
     if (name === "place-equipment") {
       const last = equipment.at(-1);
       return beginPlaceEquipment(last?.kind ?? "coil", last?.centre[2] ?? usualEquipmentM);

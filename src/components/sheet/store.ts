@@ -7,7 +7,7 @@ import type { Point2 } from "~/sheet/geometry";
 import type { Selection } from "~/sheet/selection";
 import * as sessions from "~/sheet/session";
 import type { PointerEventKind, Session } from "~/sheet/session";
-import type { SliceThrough } from "~/sheet/slice";
+import { slicedBy, type SliceThrough } from "~/sheet/slice";
 import { defaultSnap, type Modifiers, type SnapSettings } from "~/sheet/snapping";
 import type { Step, Surroundings } from "~/sheet/steps/step";
 import type { SizePx, View } from "~/sheet/view";
@@ -109,14 +109,8 @@ export class SheetStore {
     const { session, snap, view, editable } = this.state;
     const changed = change(session, { snap, reachM: reachPx / view.scale, siteEarth: this.siteEarth });
     if (changed === session || (!editable && changed.document !== session.document)) return;
-    const sliced =
-      changed.selection === session.selection
-        ? undefined
-        : changed.selection.find(({ kind }) => kind === "sensor");
-    this.update({
-      session: changed,
-      ...(sliced?.kind === "sensor" && { sliceThrough: { kind: "sensor", id: sliced.id } }),
-    });
+    const sliceThrough = changed.selection === session.selection ? null : slicedBy(changed.selection);
+    this.update({ session: changed, ...(sliceThrough !== null && { sliceThrough }) });
   }
 
   pointer(kind: PointerEventKind, pointM: Point2, modifiers: Modifiers): void {

@@ -3,6 +3,7 @@ import { sameOwner, pathOf, withPath, withVertex, removeVertex } from "./paths";
 import type { Point3 } from "../geometry";
 import { selectedOwners, type SelectedItem, type Selection } from "../selection";
 import { duplicateCircuit } from "./circuits";
+import { aidOf, removeAid, withAid } from "./aids";
 import { duplicateEquipment, updateEquipment } from "./equipment";
 import { duplicateSensor, updateSensor } from "./sensors";
 import { removeCircuitAndEmptyRoute, removeEquipment, removeRoute, removeSensors } from "./remove";
@@ -20,6 +21,11 @@ export function moveSelection(document: PlanDocument, selection: Selection, by: 
         ...sensor,
         position: shifted(sensor.position, by),
       }));
+    }
+    if (item.kind === "aid") {
+      const aid = aidOf(moved, item.aid, item.id);
+      if (aid !== undefined)
+        moved = withAid(moved, { ...aid, points: aid.points.map((point) => shifted(point, by)) });
     }
     if (item.kind === "equipment") {
       moved = updateEquipment(moved, item.id, (present) => ({
@@ -59,6 +65,7 @@ export function removeSelection(document: PlanDocument, selection: Selection): P
   );
   return selection.reduce<PlanDocument>((left, item) => {
     if (item.kind === "sensor") return removeSensors(left, [item.id]);
+    if (item.kind === "aid") return removeAid(left, item.aid, item.id);
     if (item.kind === "equipment") return removeEquipment(left, [item.id]);
     if (item.kind === "circuit") return removeCircuitAndEmptyRoute(left, item.id);
     return item.kind === "route" ? removeRoute(left, item.id) : left;

@@ -1,5 +1,6 @@
 import type { PlanDocument } from "~/domain/plan-document/plan-document";
 import { duplicateSelection, moveSelection, removeSelection } from "../edits/arrange";
+import { aidOf } from "../edits/aids";
 import { insertVertex, ownedPaths, pathOf, sameOwner } from "../edits/paths";
 import { distanceM, flatOf, type Point2, type Point3 } from "../geometry";
 import { hitAt } from "../hit";
@@ -23,6 +24,7 @@ function instructionOf(state: State, count: number): string {
 /** Where the held thing lies; null for a whole route, which moves by the grid from where it was taken. */
 function placeOf(document: PlanDocument, item: SelectedItem): Point3 | null {
   if (item.kind === "sensor") return document.sensors.find(({ id }) => id === item.id)?.position ?? null;
+  if (item.kind === "aid") return aidOf(document, item.aid, item.id)?.points[0] ?? null;
   if (item.kind === "equipment") return document.equipment.find(({ id }) => id === item.id)?.centre ?? null;
   return item.kind === "vertex" ? (pathOf(document, item.owner)?.[item.index] ?? null) : null;
 }

@@ -12,6 +12,11 @@ export const stepNames = [
   "place-sensor",
   "place-equipment",
   "measure",
+  "section-line",
+  "datum",
+  "mark",
+  "mounting-zone",
+  "clamp-loop",
 ] as const;
 export type StepName = (typeof stepNames)[number];
 
@@ -23,6 +28,11 @@ export const stepTitles: Record<StepName, string> = {
   "place-sensor": "Place sensor",
   "place-equipment": "Place equipment",
   measure: "Measure",
+  "section-line": "Section line",
+  datum: "Datum",
+  mark: "Mark",
+  "mounting-zone": "Mounting zone",
+  "clamp-loop": "Clamp-meter loop",
 };
 
 /** What a step reads of the sheet at each event. */

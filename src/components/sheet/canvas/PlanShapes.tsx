@@ -3,11 +3,13 @@ import type { Equipment } from "~/domain/plan-document/equipment";
 import type { PlanDocument } from "~/domain/plan-document/plan-document";
 import { positionsWorstFirst } from "~/domain/positions";
 import { VERDICTS, type Verdict } from "~/domain/screening-result";
+import { aidsOf } from "~/sheet/edits/aids";
 import { equipmentWords } from "~/sheet/edits/equipment";
 import { circuitsOn, ownedPaths, ownerOfCircuit, sameOwner, type OwnedPath } from "~/sheet/edits/paths";
 import { placeLabels } from "~/sheet/label-places";
 import { isSelected, selectedOwners } from "~/sheet/selection";
 import { useSelection, useSheet, useShownDocument } from "../store";
+import { AidShape } from "./AidShape";
 import { EquipmentShape } from "./EquipmentShape";
 import { PathShape, type Carried } from "./PathShape";
 import { radiusPx, SensorShape } from "./SensorShape";
@@ -90,6 +92,15 @@ export function PlanShapes({ scale, palette }: { scale: number; palette: Palette
             palette={palette}
           />
         ))}
+      {aidsOf(document).map((aid) => (
+        <AidShape
+          key={`${aid.kind}/${aid.id}`}
+          aid={aid}
+          scale={scale}
+          palette={palette}
+          selected={isSelected(selection, { kind: "aid", aid: aid.kind, id: aid.id })}
+        />
+      ))}
       {document.equipment.map((item) => (
         <EquipmentShape
           key={item.id}

@@ -1,4 +1,5 @@
 import type { PlanDocument } from "~/domain/plan-document/plan-document";
+import { aidsOf } from "~/sheet/edits/aids";
 import { ownedPaths } from "~/sheet/edits/paths";
 import { sheetCorners } from "~/sheet/edits/scale";
 import { boundsOf, flatOf, type Bounds } from "~/sheet/geometry";
@@ -13,6 +14,7 @@ export function planBounds(document: PlanDocument): Bounds {
     ...(sheet === undefined ? [] : sheetCorners(sheet)),
     ...ownedPaths(document).flatMap(({ path }) => path.map(flatOf)),
     ...document.sensors.map(({ position }) => flatOf(position)),
+    ...aidsOf(document).flatMap(({ points: drawn }) => drawn.map(flatOf)),
     ...document.equipment.map(({ centre }) => flatOf(centre)),
   ];
   return boundsOf(points) ?? emptyRoom;

@@ -1,4 +1,5 @@
 import { Button } from "~/components/ui/Button";
+import { aidOf } from "~/sheet/edits/aids";
 import { duplicateSelection, removeSelection } from "~/sheet/edits/arrange";
 import { addCircuitToRoute } from "~/sheet/edits/circuits";
 import { removeRoute } from "~/sheet/edits/remove";
@@ -7,6 +8,7 @@ import { itemOfPath, type SelectedItem } from "~/sheet/selection";
 import { CommitField } from "../inputs/CommitField";
 import { useDocument, useEditable, useSelection, useSheetStore } from "../store";
 import { EquipmentPanel } from "../equipment/EquipmentPanel";
+import { AidPanel } from "./AidPanel";
 import { CircuitPanel } from "./CircuitPanel";
 import { SensorPanel } from "./SensorPanel";
 import { Vertices } from "./VertexList";
@@ -25,6 +27,10 @@ export function SelectedPanel() {
   if (item.kind === "sensor") {
     const sensor = document.sensors.find(({ id }) => id === item.id);
     return sensor === undefined ? null : <SensorPanel key={sensor.id} sensor={sensor} />;
+  }
+  if (item.kind === "aid") {
+    const aid = aidOf(document, item.aid, item.id);
+    return aid === undefined ? null : <AidPanel key={`${aid.kind}/${aid.id}`} aid={aid} />;
   }
   if (item.kind === "equipment") {
     const found = document.equipment.find(({ id }) => id === item.id);

@@ -2,6 +2,7 @@ import { Button } from "~/components/ui/Button";
 import { MAKERS_FIGURE_REMARK, SENSOR_KINDS } from "~/domain/catalogue";
 import type { PlanDocument } from "~/domain/plan-document/plan-document";
 import type { Sensor } from "~/domain/plan-document/sensor";
+import { fromDatum, toPlanFrame } from "~/sheet/edits/aids";
 import { limitsOfKind } from "~/sheet/edits/sensor-kinds";
 import { removeSensors } from "~/sheet/edits/remove";
 import { needsEarthField, updateSensor } from "~/sheet/edits/sensors";
@@ -62,6 +63,16 @@ export function SensorPanel({ sensor }: { sensor: Sensor }) {
         disabled={disabled}
         onChange={(position) => change("Position", (present) => ({ ...present, position }))}
       />
+      {document.drawing.datum !== undefined && (
+        <PositionFields
+          legend={`From ${document.drawing.datum.name}`}
+          position={fromDatum(document, sensor.position) ?? sensor.position}
+          disabled={disabled}
+          onChange={(offset) =>
+            change("Position", (present) => ({ ...present, position: toPlanFrame(document, offset) }))
+          }
+        />
+      )}
       <NumberField
         label="Position tolerance"
         unit="mm"

@@ -1,5 +1,7 @@
 import { Button } from "~/components/ui/Button";
 import { isTraced } from "~/sheet/edits/circuits";
+import { FullAt } from "./FullAt";
+import { useWaitingCurrents } from "./use-waiting-currents";
 import { beginStep, focusDrawing } from "../StepBar";
 import { useDocument, useEditable, useSheetStore } from "../store";
 
@@ -7,7 +9,9 @@ import { useDocument, useEditable, useSheetStore } from "../store";
 export function WaitingPanel({ onOpenSchedule }: { onOpenSchedule: () => void }) {
   const store = useSheetStore();
   const editable = useEditable();
-  const { circuits } = useDocument();
+  const document = useDocument();
+  const { circuits } = document;
+  const full = useWaitingCurrents(document);
   const untraced = circuits.filter((circuit) => !isTraced(circuit));
   const unloaded = circuits.filter((circuit) => isTraced(circuit) && circuit.supply === null);
   return (
@@ -62,9 +66,14 @@ export function WaitingPanel({ onOpenSchedule }: { onOpenSchedule: () => void })
                 >
                   {name}
                 </button>
+                <FullAt circuitId={id} full={full} />
               </li>
             ))}
           </ul>
+          {full.kind === "asking" && (
+            <p className="text-muted">Working out at which currents budgets would be full…</p>
+          )}
+          {full.kind === "refused" && <p className="text-muted">{full.message}</p>}
         </>
       )}
     </div>

@@ -3,6 +3,7 @@ import { Button } from "~/components/ui/Button";
 import { SENSOR_KINDS, sensorKind } from "~/domain/catalogue";
 import { angleText, fieldText, gradientText } from "~/domain/units";
 import type { Limit, Sensor } from "~/domain/plan-document/sensor";
+import { fromDatum } from "~/sheet/edits/aids";
 import { freeName } from "~/sheet/edits/ids";
 import { removeSensors } from "~/sheet/edits/remove";
 import { limitsOfKind, limitTitles } from "~/sheet/edits/sensor-kinds";
@@ -23,7 +24,7 @@ const usualHeightM = 1.1;
 export function SensorsTable() {
   const store = useSheetStore();
   const editable = useEditable();
-  const { sensors } = useDocument();
+  const { sensors, drawing } = useDocument();
   const [kindId, setKindId] = useState(SENSOR_KINDS[0]?.id ?? "");
   const add = () => {
     const kind = sensorKind(kindId);
@@ -49,6 +50,7 @@ export function SensorsTable() {
                     {column}
                   </th>
                 ))}
+                {drawing.datum !== undefined && <th scope="col">From {drawing.datum.name}, m</th>}
                 <th scope="col">Limits</th>
                 {editable && (
                   <th scope="col">
@@ -86,6 +88,7 @@ function Row({ sensor }: { sensor: Sensor }) {
   const store = useSheetStore();
   const disabled = !useEditable();
   const { name } = sensor;
+  const offset = fromDatum(useDocument(), sensor.position);
   const change = (label: string, how: (present: Sensor) => Sensor) =>
     store.edit(`${label} of ${name}`, (whole) => updateSensor(whole, sensor.id, how));
   return (
@@ -108,6 +111,7 @@ function Row({ sensor }: { sensor: Sensor }) {
         disabled={disabled}
         onChange={(position) => change("Position", (present) => ({ ...present, position }))}
       />
+      {offset !== null && <td>{offset.map((partM) => partM.toFixed(3)).join(", ")}</td>}
       <td>{sensor.limits.map((limit) => `${limitTitles[limit.kind]} ${limitText(limit)}`).join(", ")}</td>
       {!disabled && (
         <td className="whitespace-nowrap">
