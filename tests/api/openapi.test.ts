@@ -2,16 +2,20 @@ import request from "supertest";
 import { afterAll, beforeAll, describe, expect, it } from "vitest";
 import * as z from "zod";
 import { statusByErrorCode, type ErrorCode } from "../../src/domain/errors";
+import { releaseSentence } from "../../src/domain/revision";
 import { roles } from "../../src/domain/roles";
 import { planDocumentSchema } from "../../src/domain/plan-document/plan-document";
 import { db } from "../../src/server/db/client";
 import { findNoticeById } from "../../src/server/db/queries/notices";
+import { findSite } from "../../src/server/db/queries/sites";
 import { draftTagOf } from "../../src/server/notices/draft-tag";
 import { storeDrawing } from "../../src/server/drawings/drawings";
+import { freezeRevision } from "../../src/server/revisions/submit";
 import { as } from "../fixtures/api-client";
 import { floorPicture } from "../fixtures/images";
 import { awkwardPlan, awkwardResult, parsed } from "../fixtures/judged-plan";
-import { documentedCalls, type Caller } from "../fixtures/openapi/calls";
+import type { Caller } from "../fixtures/openapi/call";
+import { documentedCalls } from "../fixtures/openapi/calls";
 import {
   judgeOf,
   type OpenApi,
@@ -55,6 +59,10 @@ async function newCaller(): Promise<Caller> {
   const { id: noticeId } = await newDraft(member, screened, []);
   const notice = await findNoticeById(db(), member.organisationId, noticeId);
   const fresh = await as(app, member)("post", `/api/plans/${plan.id}/screenings`).send({ version: 1 });
+  const reviewed = await newScreenedPlan(member);
+  const auditor = await newMember(organisation, ["auditor"]);
+  const revision = await freezeRevision(member, reviewed.plan, reviewed.screeningId, "");
+  const reviewedSite = await findSite(db(), member.organisationId, reviewed.plan.siteId);
   return {
     ids: {
       siteId: plan.siteId,
@@ -66,8 +74,20 @@ async function newCaller(): Promise<Caller> {
       noticeTag: draftTagOf(notice?.coveringText ?? "", []),
       contactId: await newContact(member, plan.siteId),
       ...(await newKeptOf(member, keptIds)),
+      reviewed: {
+        planId: reviewed.plan.id,
+        revisionId: revision.id,
+        sentence: releaseSentence({
+          ordinal: 1,
+          planName: reviewed.plan.name,
+          siteName: reviewedSite?.name ?? "",
+          dispositions: ["held", "held", "released"],
+        }),
+        auditorName: auditor.name,
+      },
     },
     ask: as(app, member),
+    askAsAuditor: as(app, auditor),
   };
 }
 

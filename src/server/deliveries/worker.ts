@@ -3,6 +3,7 @@ import { errorReport } from "../error-report";
 import { log } from "../log";
 import { openMailTransport } from "../mail/transport";
 import { purgeByRetention } from "../retention/purge";
+import { keepConcessions } from "../revisions/concessions";
 import { deliverNext } from "./deliver";
 
 const pollMs = 1_500;
@@ -23,6 +24,7 @@ export async function runDeliveryWorker({ signal }: { signal: AbortSignal }): Pr
       try {
         if (Date.now() >= purgeAtMs) {
           await purgeByRetention();
+          await keepConcessions();
           purgeAtMs = Date.now() + purgeEveryMs;
         }
         while (!isStopping() && (await deliverNext(transport)));
