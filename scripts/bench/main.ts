@@ -1,8 +1,10 @@
 import { benchKernel } from "./kernel";
+import { benchScreen } from "./screen";
 
 /** Each bench answers with one line of JSON: cpuSeconds, sizes, and the rival's figure taken in the same run. */
 const benches: Readonly<Record<string, () => Promise<object>>> = {
   kernel: benchKernel,
+  screen: benchScreen,
 };
 
 const name = process.argv[2] ?? "";

@@ -17,6 +17,7 @@ export function dipoleSet(
   const m = unit(direction);
   const k = (fieldT * distanceM ** 3) / 2;
   return {
+    rows: null,
     addField: (x, y, z, out, at) => {
       const r: Vector = [x - centre[0], y - centre[1], z - centre[2]];
       const size = Math.max(Math.hypot(...r), CLOSEST_M);

@@ -58,6 +58,7 @@ export function loopSet(centres: readonly Vector[], axis: Vector, radiusM: numbe
     return { radial, rho, field: loopField(radiusM, rho, height) };
   };
   return {
+    rows: null,
     addField: (x, y, z, out, at) => {
       for (const centre of centres) {
         const { radial, field } = meridian(centre, x, y, z);

@@ -36,6 +36,7 @@ export function twistedSet(lines: readonly TwistedLine[]): ConductorSet {
     }
   };
   return {
+    rows: null,
     addField: (x, y, z, out, at) =>
       each(x, y, z, (rows, count) => addSegmentField(rows, 0, count, x, y, z, out, at)),
     addGradient: (x, y, z, out, at) =>

@@ -5,7 +5,6 @@ import type { ResolvedCircuit } from "~/domain/plan-document/resolved";
 import type { Supply } from "~/domain/plan-document/supply";
 import { segmentSet, type ConductorSet } from "~/field/conductor-set";
 import { offsetPath, type SectionFrames } from "~/field/section-frames";
-import { SEGMENT_STRIDE } from "~/field/segment";
 import { distance, type Vector } from "~/field/vector";
 import { conductorCurrents, type ConductorCurrents } from "./conductor-currents";
 import { slotsOf, spaced } from "./slots";
@@ -66,10 +65,7 @@ function layConductors(arrangement: Arrangement, carriers: Carrier[], frames: Se
 }
 
 function setsOf(conductors: DrawnConductor[], carriers: Carrier[], radiusM: number): ConductorSet[] {
-  return carriers.map((_, set) => {
-    const rows = rowsOf(conductors, set, radiusM);
-    return segmentSet(rows, 0, rows.length / SEGMENT_STRIDE);
-  });
+  return carriers.map((_, set) => segmentSet(rowsOf(conductors, set, radiusM)));
 }
 
 function setsFor(
@@ -116,7 +112,7 @@ function rowsOf(conductors: DrawnConductor[], set: number, radiusM: number): Flo
 
 function centreLineSet(frames: SectionFrames, radiusM: number): ConductorSet {
   const rows = frames.legs.flatMap(({ start, end }) => [...start, ...end, radiusM, 1]);
-  return segmentSet(Float64Array.from(rows), 0, frames.legs.length);
+  return segmentSet(Float64Array.from(rows));
 }
 
 function driveOf({ frequencyHz, order, supply, stray }: ConductorCurrents, carriers: Carrier[]): Drive {

@@ -2,16 +2,13 @@ import * as z from "zod";
 import type { PlanDocument } from "~/domain/plan-document/plan-document";
 import { point } from "~/domain/plan-document/quantities";
 import { resolveDefaults } from "~/domain/plan-document/resolved";
-import type { Vector } from "~/field/vector";
-import { boundClass, boundsAt } from "./bounds";
 import { compilePlan, type CompiledPlan } from "./compile";
 import { planEarth, type PlanEarth } from "./earth";
-import { componentPhasors, influenceAt } from "./influence";
 import { caseFactors, type CaseFactors } from "./load-cases";
 import { limitMeasure, type LimitMeasure } from "./measures/measure-of";
 import { RefusedDocumentError } from "./refusal";
-import { sumGroups } from "./sensor-field";
 import { runSteps, type ScreenOptions, type Steps } from "./steps";
+import { TILE_POINTS, tileMeasure } from "./tile-measure";
 
 /** Most points of one map. */
 export const MAX_MAP_POINTS = 1_000_000;
@@ -90,16 +87,20 @@ export function* fieldMapSteps(document: PlanDocument, request: FieldMapRequest)
 function* mapPlan(plan: CompiledPlan, earth: PlanEarth | null, request: FieldMapRequest): Steps<FieldMap> {
   const { origin, across, up, columns, rows } = request.grid;
   const measure = measureOf(plan, request);
-  const valueAt = pointMeasure(plan, earth, measure, factorsOf(plan, request.loadCaseId));
+  const fill = tileMeasure(plan, earth, measure, factorsOf(plan, request.loadCaseId));
   const values = new Float64Array(columns * rows);
   for (let row = 0; row < rows; row++) {
     yield { done: row, total: rows };
-    for (let column = 0; column < columns; column++) {
-      values[row * columns + column] = valueAt([
-        origin[0] + column * across[0] + row * up[0],
-        origin[1] + column * across[1] + row * up[1],
-        origin[2] + column * across[2] + row * up[2],
-      ]);
+    for (let first = 0; first < columns; first += TILE_POINTS) {
+      const last = Math.min(columns, first + TILE_POINTS);
+      const points = new Float64Array(3 * (last - first));
+      for (let column = first; column < last; column++) {
+        for (let i = 0; i < 3; i++) {
+          points[3 * (column - first) + i] =
+            (origin[i] as number) + column * (across[i] as number) + row * (up[i] as number);
+        }
+      }
+      fill(points, values.subarray(row * columns + first, row * columns + last));
     }
   }
   yield { done: rows, total: rows };
@@ -125,32 +126,4 @@ function factorsOf(plan: CompiledPlan, loadCaseId: string | null): CaseFactors {
   throw new RefusedDocumentError([
     { path: "loadCases", message: `there is no load case "${loadCaseId ?? ""}"` },
   ]);
-}
-
-function pointMeasure(
-  plan: CompiledPlan,
-  earth: PlanEarth | null,
-  { includes, value }: LimitMeasure,
-  factors: CaseFactors,
-): (at: Vector) => number {
-  const influence = new Float64Array(3 * plan.setCount);
-  const phasors = new Float64Array(6 * plan.components.length);
-  const groups = new Float64Array(6 * plan.frequencies.groups.length);
-  const bounds = new Float64Array(plan.frequencies.classesHz.length);
-  const included = plan.components.map(({ drive }) => includes(drive.frequencyHz));
-  const classes = plan.bounds.map((bound) =>
-    includes(bound.frequencyHz) ? boundClass(bound, plan.frequencies) : -1,
-  );
-  return (at) => {
-    influenceAt(plan, ...at, influence);
-    componentPhasors(plan, influence, 3, "currents", phasors);
-    sumGroups(plan, phasors, 6, factors.items, included, groups);
-    bounds.fill(0);
-    boundsAt(plan.bounds, at).fieldT.forEach((fieldT, index) => {
-      const classIndex = classes[index] as number;
-      if (classIndex >= 0)
-        bounds[classIndex] = (bounds[classIndex] as number) + fieldT * (factors.bounds[index] as number);
-    });
-    return value({ groups, bounds, earth });
-  };
 }

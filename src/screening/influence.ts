@@ -1,4 +1,17 @@
+import { packSets, type PackedSets } from "~/field/conductor-set";
 import type { CompiledPlan } from "./compile";
+
+const packed = new WeakMap<CompiledPlan, PackedSets>();
+
+/** All conductor sets of a plan as the kernel takes them; packed once a plan. */
+export function planRows(plan: CompiledPlan): PackedSets {
+  let known = packed.get(plan);
+  if (!known) {
+    known = packSets(plan.items.flatMap(({ sets }) => sets));
+    packed.set(plan, known);
+  }
+  return known;
+}
 
 /**
  * Field at a point for 1 A in every conductor set: `fieldT[3k..3k+2]`, T/A, plan axes.

@@ -1,4 +1,5 @@
 import type { Sensor } from "~/domain/plan-document/sensor";
+import { fillSetsField, packSets, type ConductorSet } from "~/field/conductor-set";
 import type { Vector } from "~/field/vector";
 import type { CompiledPlan } from "../compile";
 import type { CaseFactors } from "../load-cases";
@@ -12,7 +13,7 @@ interface NearItem {
   components: number[];
   /** Key of the item's current in its family; −1 where it is certain. */
   currentKey: number;
-  /** Influence matrix of the item's sets, one after another for every draw. */
+  /** Influence matrix of the item's sets: all draws of one set after another. */
   influence: Float64Array;
 }
 
@@ -57,12 +58,11 @@ export class NearItems {
     currentDraw: (key: number) => number,
   ): void {
     for (const { item, components, currentKey, influence } of this.items) {
-      const from = draw * this.width * item.sets.length;
       const percent =
         item.kind === "circuit" ? item.circuit.currentTolerancePercent : item.equipment.tolerancePercent;
       const excess = currentDraw(currentKey) * percent * 0.01 * RECTANGULAR;
       for (const component of components) {
-        if (included[component]) this.addComponent(groups, component, influence, from, factors, excess);
+        if (included[component]) this.addComponent(groups, component, influence, draw, factors, excess);
       }
     }
   }
@@ -71,7 +71,7 @@ export class NearItems {
     groups: Float64Array,
     component: number,
     influence: Float64Array,
-    from: number,
+    draw: number,
     factors: CaseFactors,
     excess: number,
   ): void {
@@ -85,8 +85,9 @@ export class NearItems {
     for (let k = 0; k < item.sets.length; k++) {
       const re = scale * ((currents[2 * k] as number) + excess * (scaling[2 * k] as number));
       const im = scale * ((currents[2 * k + 1] as number) + excess * (scaling[2 * k + 1] as number));
+      const from = width * (k * this.drawCount + draw);
       for (let i = 0; i < width; i++) {
-        const g = influence[from + width * k + i] as number;
+        const g = influence[from + i] as number;
         groups[to + i] = (groups[to + i] as number) + re * g;
         groups[to + width + i] = (groups[to + width + i] as number) + im * g;
       }
@@ -101,20 +102,16 @@ export class NearItems {
     const tolerance = item.kind === "circuit" ? item.circuit.positionToleranceM : 0;
     const u = this.placeDraws("u", this.keyOf("u", component), tolerance, random);
     const v = this.placeDraws("v", this.keyOf("v", component), tolerance, random);
-    const influence = new Float64Array(drawCount * width * item.sets.length);
+    const points = new Float64Array(3 * drawCount);
     for (let draw = 0; draw < drawCount; draw++) {
-      const [x, y, z] = sensor.position.map((c, i) => {
+      for (let i = 0; i < 3; i++) {
         const moved = (own[i]?.[draw] ?? 0) * sensor.positionToleranceM * RECTANGULAR;
         const [ui, vi] = [along?.u[i] ?? 0, along?.v[i] ?? 0];
-        return c + moved - ((u?.[draw] ?? 0) * ui + (v?.[draw] ?? 0) * vi) * tolerance * RECTANGULAR;
-      }) as unknown as Vector;
-      item.sets.forEach((set, k) => {
-        const at = width * (draw * item.sets.length + k);
-        if (width === 3) set.addField(x, y, z, influence, at);
-        else set.addGradient(x, y, z, influence, at);
-      });
+        const away = ((u?.[draw] ?? 0) * ui + (v?.[draw] ?? 0) * vi) * tolerance * RECTANGULAR;
+        points[3 * draw + i] = (sensor.position[i] as number) + moved - away;
+      }
     }
-    return influence;
+    return influenceOver(item.sets, width, points);
   }
 
   private placeDraws(
@@ -136,4 +133,20 @@ export class NearItems {
   private keyOf(kind: FamilyKind, component: number): number {
     return this.families.find((entry) => entry.kind === kind)?.keys[component] ?? -1;
   }
+}
+
+function influenceOver(sets: readonly ConductorSet[], width: 3 | 9, points: Float64Array): Float64Array {
+  const drawCount = points.length / 3;
+  const influence = new Float64Array(drawCount * width * sets.length);
+  if (width === 3) {
+    fillSetsField(packSets(sets), points, influence);
+    return influence;
+  }
+  sets.forEach((set, k) => {
+    for (let draw = 0; draw < drawCount; draw++) {
+      const [x, y, z] = [points[3 * draw], points[3 * draw + 1], points[3 * draw + 2]] as Vector;
+      set.addGradient(x, y, z, influence, width * (k * drawCount + draw));
+    }
+  });
+  return influence;
 }
