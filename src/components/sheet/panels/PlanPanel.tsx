@@ -4,6 +4,7 @@ import { usesEarthField } from "~/sheet/edits/sensors";
 import { Choice } from "../inputs/Choice";
 import { CommitField } from "../inputs/CommitField";
 import { NumberField } from "../inputs/NumberField";
+import { PlanFile } from "./PlanFile";
 import { useDocument, useEditable, useSheetStore } from "../store";
 
 type EarthMode = "none" | "model" | "stated";
@@ -86,6 +87,7 @@ export function PlanPanel({ siteEarth }: { siteEarth: EarthField | null }) {
           onChange={(next) => change("Earth’s field", { earthField: next })}
         />
       )}
+      <PlanFile />
     </div>
   );
 }
