@@ -22,6 +22,12 @@ export interface LimitMeasure {
 
 const dcOnly = (frequencyHz: number): boolean => frequencyHz === 0;
 
+/** Share by which a frequency may miss an edge and still lie on it: the third harmonic of 16.7 Hz is 50.1 Hz but for its last digit. */
+const ON_EDGE = 1e-9;
+
+const inBand = (frequencyHz: number, lowHz: number, highHz: number): boolean =>
+  frequencyHz >= lowHz * (1 - ON_EDGE) && frequencyHz <= highHz * (1 + ON_EDGE);
+
 const base = { unit: "T", width: 3, axis: null } as const;
 
 const valueBy =
@@ -51,7 +57,7 @@ export function limitMeasure(
       return {
         ...base,
         axis,
-        includes: (frequencyHz) => frequencyHz > 0 && frequencyHz >= lowHz && frequencyHz <= highHz,
+        includes: (frequencyHz) => frequencyHz > 0 && inBand(frequencyHz, lowHz, highHz),
         measure: alternatingMeasure(groups, axis, unknownPhase, limit.measure),
         value: alternatingValue(groups, axis, unknownPhase, limit.measure),
       };
