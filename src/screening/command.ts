@@ -1,5 +1,5 @@
 import { readFileSync, statSync } from "node:fs";
-import type { DocumentFault } from "~/domain/plan-document/parse";
+import type { DocumentFault } from "~/domain/plan-document/faults";
 import { MAX_DOCUMENT_BYTES, readPlanDocument } from "~/domain/plan-document/read";
 import { resultText } from "~/domain/result-text";
 import { RefusedDocumentError } from "./refusal";

@@ -1,6 +1,6 @@
 import type { Arrangement, Carrier } from "~/domain/plan-document/arrangement";
 import { isSingle } from "~/domain/plan-document/arrangement-fits";
-import type { DocumentFault } from "~/domain/plan-document/parse";
+import type { DocumentFault } from "~/domain/plan-document/faults";
 import type { ResolvedCircuit } from "~/domain/plan-document/resolved";
 import type { Supply } from "~/domain/plan-document/supply";
 import { segmentSet, type ConductorSet } from "~/field/conductor-set";

@@ -1,5 +1,5 @@
 import { MAX_SEGMENTS } from "~/domain/plan-document/load";
-import type { DocumentFault } from "~/domain/plan-document/parse";
+import type { DocumentFault } from "~/domain/plan-document/faults";
 import type { ResolvedCircuit, ResolvedPlanDocument } from "~/domain/plan-document/resolved";
 import { boundItems, type BoundItem } from "./bounds";
 import { compileCircuit } from "./compile-circuit";

@@ -26,13 +26,18 @@ export function fieldReport(judging: LimitJudging, factors: CaseFactors): Pick<F
       ? []
       : [{ source, frequencyHz, re: triple(6 * index), im: triple(6 * index + 3) }],
   );
-  return { field: { static: triple(0), alternating }, ellipse: ellipseOver(judging, groups) };
+  return { field: { static: triple(0), alternating }, ellipse: ellipseOver(judging, factors) };
 }
 
 /** Over sources and frequencies: rms resultants root-sum-squared, major axes and peak-to-peak values added (upper bounds). */
-function ellipseOver(judging: LimitJudging, groups: Float64Array): Finding["ellipse"] {
-  const ellipses = judging.at.plan.frequencies.groups.flatMap(({ classIndex, frequencyHz }, index) =>
-    classIndex > 0 && judging.measure.includes(frequencyHz) ? [ellipseAt(groups, 6 * index)] : [],
+function ellipseOver({ at: { plan, field }, included }: LimitJudging, factors: CaseFactors) {
+  const { groups: table } = plan.frequencies;
+  const groups = new Float64Array(6 * table.length);
+  sumGroups(plan, field.phasors, 6, factors.items, included, groups);
+  // A source's frequencies within 0.5 % are one group, of which a band may take a part.
+  const judged = new Set(plan.components.flatMap(({ group }, i) => (included[i] ? [group] : [])));
+  const ellipses = table.flatMap(({ classIndex }, index) =>
+    classIndex > 0 && judged.has(index) ? [ellipseAt(groups, 6 * index)] : [],
   );
   if (ellipses.length === 0) return null;
   const majorAxisT = ellipses.reduce((sum, { major }) => sum + major, 0);

@@ -1,4 +1,4 @@
-import type { DocumentFault } from "~/domain/plan-document/parse";
+import type { DocumentFault } from "~/domain/plan-document/faults";
 
 /** A valid document that cannot be computed: each fault with its path, as `parsePlanDocument` lists them. */
 export class RefusedDocumentError extends Error {

@@ -1,5 +1,5 @@
 import type { Route } from "~/domain/plan-document/circuit";
-import type { DocumentFault } from "~/domain/plan-document/parse";
+import type { DocumentFault } from "~/domain/plan-document/faults";
 import type { ResolvedCircuit } from "~/domain/plan-document/resolved";
 import {
   offsetPath,

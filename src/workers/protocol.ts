@@ -1,5 +1,5 @@
 import type { Clearing, ClearingRequest } from "~/domain/clearing";
-import type { DocumentFault } from "~/domain/plan-document/parse";
+import type { DocumentFault } from "~/domain/plan-document/faults";
 import type { PlanDocument } from "~/domain/plan-document/plan-document";
 import type { ScreeningResult } from "~/domain/screening-result";
 import type { FieldMap, FieldMapRequest } from "~/screening/field-map";

@@ -1,5 +1,5 @@
 import type { ClampMeterRequest } from "~/domain/clamp-meter";
-import type { DocumentFault } from "~/domain/plan-document/parse";
+import type { DocumentFault } from "~/domain/plan-document/faults";
 import type { Finding, Verdict } from "~/domain/screening-result";
 import type { ClampReading } from "~/screening/clamp-meter";
 

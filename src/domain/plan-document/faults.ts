@@ -1,5 +1,10 @@
 import type * as z from "zod";
-import type { DocumentFault } from "./parse";
+
+/** One thing wrong with a document: where (`circuits[2].supply.currentA`) and what to do. */
+export interface DocumentFault {
+  path: string;
+  message: string;
+}
 
 /** Faults listed of one document; a flood says no more than its beginning. */
 export const MAX_FAULTS = 200;

@@ -1,16 +1,10 @@
 import type * as z from "zod";
 import { circuit, route } from "./circuit";
 import { equipment } from "./equipment";
-import { FaultList } from "./faults";
+import { FaultList, type DocumentFault } from "./faults";
 import { loadCase, planDocumentSchema, type PlanDocument } from "./plan-document";
 import { sensor } from "./sensor";
 import { sizeOf } from "./size";
-
-/** One thing wrong with a document: where (`circuits[2].supply.currentA`) and what to do. */
-export interface DocumentFault {
-  path: string;
-  message: string;
-}
 
 export type ParsedPlanDocument =
   { ok: true; document: PlanDocument } | { ok: false; faults: DocumentFault[] };

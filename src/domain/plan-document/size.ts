@@ -1,5 +1,5 @@
 import { pathText } from "./faults";
-import type { DocumentFault } from "./parse";
+import type { DocumentFault } from "./faults";
 import { MAX_CIRCUITS, MAX_LOAD_CASES, MAX_SENSORS } from "./plan-document";
 
 /** Deepest nesting of a document; a valid one needs ten levels. */

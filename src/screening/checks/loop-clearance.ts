@@ -1,4 +1,4 @@
-import type { DocumentFault } from "~/domain/plan-document/parse";
+import type { DocumentFault } from "~/domain/plan-document/faults";
 import type { ResolvedEquipment } from "~/domain/plan-document/resolved";
 import { add, along, distance, dot, scale, subtract, unit, type Vector } from "~/field/vector";
 import type { CompiledPlan } from "../compile";
