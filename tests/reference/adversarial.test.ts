@@ -2,7 +2,7 @@ import { describe, expect, it } from "vitest";
 import { MU_0 } from "~/domain/units";
 import type { Finding } from "~/domain/screening-result";
 import type { Vector } from "~/field/vector";
-import { FAR_M, findingsOf, valueOf, STATIC } from "./engine";
+import { ALTERNATING, FAR_M, findingsOf, STATIC, valueOf } from "./engine";
 
 type Circuit = Parameters<typeof findingsOf>[0][number];
 type Path = [number, number, number][];
@@ -71,7 +71,7 @@ describe("contributions to a peak-to-peak value", () => {
     supply: { kind: "ac1", currentA, frequencyHz, phaseDeg },
     source,
   });
-  const PEAK = { kind: "alternating", limitT: 1, bandHz: [1, 1000], measure: "peakToPeak" } as const;
+  const PEAK = { ...ALTERNATING, measure: "peakToPeak" as const };
   const found = (circuits: Circuit[]): Finding => {
     const [finding] = findingsOf(circuits, [1, 0, 0], [PEAK]);
     if (!finding) throw new Error("no finding");
@@ -125,6 +125,19 @@ describe("edges", () => {
     expect(inBand(50.1, 60)).toBeCloseTo(5, 6);
     expect(inBand(20, 50.1)).toBeCloseTo(5, 6);
     expect(inBand(16.7 * (1 + 1e-6), 50.1 * (1 - 1e-6))).toBe(0);
+  });
+
+  it("reports the ellipse of what the band takes, where one source has frequencies on both sides of its edge", () => {
+    const circuits = [49.9, 50.1].map((frequencyHz) => ({
+      ...single({ kind: "ac1", currentA: 10, frequencyHz }),
+      source: "mains",
+    }));
+    const limit = { kind: "alternating" as const, limitT: 1, bandHz: [50, 60] as [number, number] };
+    for (const order of [circuits, circuits.toReversed()]) {
+      const [finding] = findingsOf(order, [1, 0, 0], [limit]);
+      expect((finding?.value ?? NaN) / (10 * perAmpereT)).toBeCloseTo(1, 8);
+      expect(finding?.ellipse?.rmsT).toBe(finding?.value);
+    }
   });
 
   it("is within exactly at the limit", () => {
