@@ -1,3 +1,4 @@
+import { benchDrag } from "./drag";
 import { benchKernel } from "./kernel";
 import { benchScreen } from "./screen";
 
@@ -5,6 +6,7 @@ import { benchScreen } from "./screen";
 const benches: Readonly<Record<string, () => Promise<object>>> = {
   kernel: benchKernel,
   screen: benchScreen,
+  drag: benchDrag,
 };
 
 const name = process.argv[2] ?? "";

@@ -1,2 +1,2 @@
 /** Changes whenever a figure or text of a result can change for the same document. */
-export const ENGINE_VERSION = "1.0.0";
+export const ENGINE_VERSION = "1.1.0";

@@ -10,7 +10,16 @@ export function inputHash(document: PlanDocument): string {
 }
 
 export function hashOfResolved(document: ResolvedPlanDocument): string {
-  const bytes = new TextEncoder().encode(canonicalJson(hashedPart(document)));
+  return hashOf(hashedPart(document));
+}
+
+/** The same of all but the sensors and the document's name: what every sensor is judged by, wherever the others stand. */
+export function hashOfSources(document: ResolvedPlanDocument): string {
+  return hashOf(hashedPart({ ...document, name: "", sensors: [] }));
+}
+
+function hashOf(part: unknown): string {
+  const bytes = new TextEncoder().encode(canonicalJson(part));
   return `sha256:${encodeHexLowerCase(sha256(bytes))}`;
 }
 

@@ -1,12 +1,12 @@
 import type { PlanDocument } from "~/domain/plan-document/plan-document";
-import { worstVerdict, type ScreeningResult, type SensorResult } from "~/domain/screening-result";
+import { worstVerdict, type ScreeningResult } from "~/domain/screening-result";
 import { circulationError } from "./checks/circulation-check";
 import { openEnds } from "./checks/open-ends";
 import type { WaitingCircuit } from "./compile";
 import { earthWarnings } from "./earth";
 import { ENGINE_VERSION } from "./engine-version";
 import { leftOut } from "./left-out";
-import { preparePlan, screenSensor } from "./prepared-plan";
+import { preparePlan, screenSensor, type PreparedPlan, type ScreenedSensor } from "./prepared-plan";
 import { runSteps, type ScreenOptions, type Steps } from "./steps";
 import { cappedVerdict } from "./verdict";
 
@@ -21,32 +21,58 @@ export function screen(document: PlanDocument, options: ScreenOptions = {}): Scr
 /** The same in steps, one a sensor, so that a worker can look at its messages between them. */
 export function* screenSteps(document: PlanDocument): Steps<ScreeningResult> {
   const prepared = preparePlan(document);
-  const { resolved, earth, plan, hash } = prepared;
-  const waiting = plan.waiting.length > 0;
-  const warnings = [...plan.waiting.map(waitingText), ...plan.warnings, ...earthWarnings(earth)];
+  const sensors = yield* screenSensors(prepared, []);
+  return resultOf(prepared, sensors, checkSources(prepared));
+}
 
-  const sensors: SensorResult[] = [];
-  for (let index = 0; index < resolved.sensors.length; index++) {
-    yield { done: sensors.length, total: resolved.sensors.length };
-    const screened = screenSensor(prepared, index);
-    warnings.push(...screened.warnings);
-    sensors.push(screened.result);
+/** Judges every sensor in steps but those that are known, by their place in the document. */
+export function* screenSensors(
+  prepared: PreparedPlan,
+  known: readonly (ScreenedSensor | undefined)[],
+): Steps<ScreenedSensor[]> {
+  const total = prepared.resolved.sensors.length;
+  const screened: ScreenedSensor[] = [];
+  for (let index = 0; index < total; index++) {
+    const one = known[index];
+    if (!one) yield { done: index, total };
+    screened.push(one ?? screenSensor(prepared, index));
   }
-  yield { done: sensors.length, total: sensors.length };
+  yield { done: total, total };
+  return screened;
+}
 
+/** The self-checks that ask nothing of the sensors. */
+export interface SourceChecks {
+  circulationError: number | null;
+  openEnds: ScreeningResult["checks"]["openEnds"];
+}
+
+export function checkSources({ plan }: PreparedPlan): SourceChecks {
+  return { circulationError: circulationError(plan), openEnds: openEnds(plan) };
+}
+
+export function resultOf(
+  { resolved, earth, plan, hash }: PreparedPlan,
+  screened: readonly ScreenedSensor[],
+  checks: SourceChecks,
+): ScreeningResult {
+  const sensors = screened.map(({ result }) => result);
+  const worst = worstVerdict(sensors.map(({ verdict }) => verdict));
+  const warnings = [
+    ...plan.waiting.map(waitingText),
+    ...plan.warnings,
+    ...earthWarnings(earth),
+    ...screened.flatMap((sensor) => sensor.warnings),
+  ];
   return {
     format: "stillneedle-result",
     version: 1,
     inputHash: hash,
     engineVersion: ENGINE_VERSION,
-    verdict: cappedVerdict(worstVerdict(sensors.map(({ verdict }) => verdict)), waiting),
+    verdict: cappedVerdict(worst, plan.waiting.length > 0),
     earthField: earth?.elements ?? null,
     sensors,
-    checks: {
-      circulationError: circulationError(plan),
-      openEnds: openEnds(plan),
-      warnings,
-    },
+    checks: { ...checks, warnings },
     leftOut: leftOut(resolved),
   };
 }

@@ -1,3 +1,4 @@
+import { LiveScreener } from "~/screening/live";
 import { failure, jobSteps, type Job } from "./jobs";
 import type { WorkerRequest, WorkerResponse } from "./protocol";
 
@@ -5,11 +6,13 @@ import type { WorkerRequest, WorkerResponse } from "./protocol";
 const SLICE_MS = 12;
 
 /**
- * Runs jobs one after another in slices, so that a cancel is heard while a job runs. `post` sends an answer; map values are
+ * Runs jobs one after another in slices, so that a cancel is heard while a job runs. Of a document that differs from the one screened before
+ * in its sensors alone, only those that differ are judged. `post` sends an answer; map values are
  * transferred, not copied.
  */
 export class JobRunner {
   private readonly waiting: Job[] = [];
+  private readonly live = new LiveScreener();
   private readonly cancelled = new Set<number>();
   private running: number | null = null;
 
@@ -36,7 +39,7 @@ export class JobRunner {
   }
 
   private async run(job: Job): Promise<void> {
-    const steps = jobSteps(job);
+    const steps = jobSteps(job, (document) => this.live.steps(document));
     try {
       for (let until = performance.now() + SLICE_MS; ;) {
         const step = steps.next();

@@ -7,12 +7,12 @@ import type { WorkerRequest, WorkerResponse } from "./protocol";
 
 export type Job = Exclude<WorkerRequest, { type: "cancel" }>;
 
-/** A job in steps; its outcome is its last answer. Failures are thrown and made an answer by `failure`. */
-export function* jobSteps(job: Job): Steps<WorkerResponse> {
+/** A job in steps; its outcome is its last answer. Failures are thrown and made an answer by `failure`. `screening` screens a document. */
+export function* jobSteps(job: Job, screening: typeof screenSteps = screenSteps): Steps<WorkerResponse> {
   const { id } = job;
   switch (job.type) {
     case "screen":
-      return { type: "screened", id, result: yield* screenSteps(job.document) };
+      return { type: "screened", id, result: yield* screening(job.document) };
     case "map":
       return { type: "mapped", id, map: yield* fieldMapSteps(job.document, job.request) };
     case "clearing":

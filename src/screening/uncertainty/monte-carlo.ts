@@ -33,9 +33,8 @@ export function monteCarloUncertainty(
   const nearSet = new Set(near);
   const base = baseGroups(judging, factors, nearSet);
   const inputs = inputVectors(judging, factors, measured.slope, nearSet);
-  const { single: drawn, lumped } = nearItems
-    ? { single: inputs, lumped: null }
-    : partLumped(droppingSmall(inputs), judging.measure.width);
+  const isNeeded = neededApart(judging, nearItems);
+  const { single: drawn, lumped } = partLumped(droppingSmall(inputs, isNeeded), judging.stride, isNeeded);
   const shared = drawn.map(({ kind, key }) => nearItems?.drawsOf(kind, key));
   const draws = new Float64Array(drawn.length);
   const packed = new PackedInputs(drawn, judging.stride);
@@ -84,10 +83,19 @@ function baseGroups(judging: LimitJudging, factors: CaseFactors, near: ReadonlyS
 }
 
 const sizeOf = ({ values }: InputVector): number => product(values, 0, values, 0, values.length);
+
+/** Inputs whose own draws are looked at: those that near items share, and the sensor's place where bounds depend on it. */
+function neededApart(judging: LimitJudging, nearItems: NearItems | null): (input: InputVector) => boolean {
+  const bounded = judging.at.plan.bounds.length > 0;
+  return ({ kind, key }) =>
+    (nearItems?.uses(kind, key) ?? false) || (bounded && (kind === "x" || kind === "y" || kind === "z"));
+}
+
 /** Leaves out inputs too small to tell. */
-function droppingSmall(inputs: InputVector[]): InputVector[] {
-  const ascending = inputs.map((input) => ({ input, size: sizeOf(input) })).sort((a, b) => a.size - b.size);
-  const total = ascending.reduce((sum, { size }) => sum + size, 0);
+function droppingSmall(inputs: InputVector[], isNeeded: (input: InputVector) => boolean): InputVector[] {
+  const sized = inputs.map((input) => ({ input, size: sizeOf(input) }));
+  const total = sized.reduce((sum, { size }) => sum + size, 0);
+  const ascending = sized.filter(({ input }) => !isNeeded(input)).sort((a, b) => a.size - b.size);
   let dropped = 0;
   const small = new Set<InputVector>();
   for (const { input, size } of ascending) {

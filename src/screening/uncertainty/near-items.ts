@@ -5,6 +5,7 @@ import type { CompiledPlan } from "../compile";
 import type { CaseFactors } from "../load-cases";
 import type { SourceItem } from "../source-item";
 import { RECTANGULAR, SENSOR_AXES, type FamilyKind, type InputFamily } from "./families";
+import type { InputVector } from "./input-vectors";
 import type { RandomStream } from "./random";
 import { frameOf } from "./sensor-families";
 
@@ -42,6 +43,12 @@ export class NearItems {
       const influence = this.drawnInfluence(item, first, random);
       return [{ item, components, currentKey: this.keyOf("current", first), influence }];
     });
+  }
+
+  /** Whether near items look at the draws of an input. */
+  uses(kind: InputVector["kind"], key: number): boolean {
+    if (kind === "current") return this.items.some(({ currentKey }) => currentKey === key);
+    return this.places.has(`${kind} ${key}`);
   }
 
   /** The draws of a place that near items share with the rest; undefined where none of them depends on it. */

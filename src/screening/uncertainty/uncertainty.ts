@@ -28,10 +28,10 @@ const COVERAGE = 2;
 
 /**
  * Uncertainties of one sensor's limits: to first order where that is safe, by Monte Carlo where a position tolerance is above a fifth
- * of the distance to a conductor, or where the field compared is not clear of its own spread. Seeded by the input hash.
+ * of the distance to a conductor, or where the field compared is not clear of its own spread. Seeded by `seedHash` and the number of the sensor.
  */
-export function uncertaintiesOf(inputHash: string, sensorIndex: number): UncertaintyOf {
-  const seed = inputHash.replace("sha256:", "");
+export function uncertaintiesOf(seedHash: string, sensorIndex: number): UncertaintyOf {
+  const seed = seedHash.replace("sha256:", "");
   const anew = new Map<3 | 9, NearItems>();
   return (judging, factors, state, measured) => {
     const { plan, sensor } = judging.at;
