@@ -131,12 +131,18 @@ function balanceFaults(supply: Supply, stray: { re: number; im: number }): Fault
     const sum = sumOfLines(entry);
     const declared = entry.order <= 1 ? stray : { re: 0, im: 0 };
     if (Math.hypot(sum.re - declared.re, sum.im - declared.im) <= allowedA) return [];
-    const sumA = Number(Math.hypot(sum.re, sum.im).toPrecision(6));
-    const angleDeg = Number(((Math.atan2(sum.im, sum.re) * 180) / Math.PI).toFixed(2));
-    const sumText = entry.order === 0 ? `${Number(sum.re.toPrecision(6))} A` : `${sumA} A at ${angleDeg}°`;
+    // What rounding leaves of a balanced sum is nought to whoever reads this.
+    const whole = Math.hypot(sum.re, sum.im) < 1e-9 * largestCurrentA(supply) ? { re: 0, im: 0 } : sum;
+    const sumA = Number(Math.hypot(whole.re, whole.im).toPrecision(6));
+    const angleDeg = Number(((Math.atan2(whole.im, whole.re) * 180) / Math.PI).toFixed(2));
+    const sumText = entry.order === 0 ? `${Number(whole.re.toPrecision(6))} A` : `${sumA} A at ${angleDeg}°`;
+    const declaredA = Number(Math.hypot(declared.re, declared.im).toPrecision(6));
     const message =
-      `the conductors' currents add up to ${sumText} (${entry.frequencyHz} Hz) and none of them carries it back; ` +
-      "add a neutral or return, or declare it as strayCurrentA";
+      declaredA > 0
+        ? `the conductors' currents add up to ${sumText} (${entry.frequencyHz} Hz), but strayCurrentA declares ` +
+          `${declaredA} A of them to come back elsewhere; make the phases add up to it, or correct strayCurrentA`
+        : `the conductors' currents add up to ${sumText} (${entry.frequencyHz} Hz) and none of them carries it back; ` +
+          "add a neutral or return, or declare it as strayCurrentA";
     return [{ path: ["supply"], message }];
   });
 }

@@ -197,6 +197,11 @@ describe("parsePlanDocument", () => {
       );
     expect(unbalanced({}).join()).toMatch(/^circuits\[0\]\.supply: .*add up to 10 A at -60°/);
     expect(unbalanced({ strayCurrentA: 10, strayAngleDeg: -60 })).toEqual([]);
+    const balanced = phases.map((phase) => ({ ...phase, currentA: 63.7 }));
+    const supply = { kind: "ac3", frequencyHz: 50, phases: balanced };
+    expect(unbalanced({ supply, strayCurrentA: 0.1 }).join()).toMatch(
+      /add up to 0 A at 0° \(50 Hz\), but strayCurrentA declares 0\.1 A/,
+    );
   });
 
   it("refuses what is no document without throwing", () => {
