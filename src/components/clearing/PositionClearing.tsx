@@ -1,8 +1,10 @@
+import type { ReactNode } from "react";
 import { Button } from "~/components/ui/Button";
+import type { ClearingPart } from "~/domain/clearing";
 import { AllowableCurrents } from "./AllowableCurrents";
 import { ClearPositions } from "./ClearPositions";
 import { SingleChanges } from "./SingleChanges";
-import { useClearing } from "./use-clearing";
+import { useClearing, type ClearingAnswer } from "./use-clearing";
 
 interface Props {
   /** Address of the screening in the API. */
@@ -15,48 +17,60 @@ interface Props {
 
 /** What would clear one flagged position: other places, single changes, less current. Asked for once it is in sight. */
 export function PositionClearing({ api, sensorId, sensorNames, sources, limits }: Props) {
-  const { asked, again } = useClearing(`${api}/clearing?position=${encodeURIComponent(sensorId)}`);
   const nameOf = (id: string) => sensorNames.find((sensor) => sensor.id === id)?.name ?? id;
-  if (asked.state === "working")
-    return (
-      <p className="no-print text-sm text-muted" role="status">
-        Working out what would clear it…
-      </p>
-    );
-  if (asked.state === "failed")
-    return (
-      <div className="no-print text-sm" role="alert">
-        <p className="field-error">{asked.message}</p>
-        <Button onClick={again}>Try again</Button>
-      </div>
-    );
-  const { sensors, changes } = asked.answer;
-  const [own] = sensors;
-  if (own === undefined) return <p className="text-sm">It is within.</p>;
+  const address = `${api}/clearing?position=${encodeURIComponent(sensorId)}`;
   return (
     <div className="grid gap-5">
-      {own.positions !== null && (
-        <section>
-          <h5 className="keep-with-next mb-1 text-sm font-semibold">Nearest clear positions</h5>
-          <ClearPositions positions={own.positions} sensorName={nameOf(sensorId)} />
-        </section>
-      )}
-      <section>
-        <h5 className="keep-with-next mb-1 text-sm font-semibold">Single changes, most effective first</h5>
-        <SingleChanges changes={changes} sensorId={sensorId} nameOf={nameOf} />
-      </section>
-      <section>
-        <h5 className="keep-with-next mb-1 text-sm font-semibold">
-          Current of one circuit alone, all else unchanged
-        </h5>
-        <AllowableCurrents
-          currents={own.currents}
-          waiting={own.waiting}
-          sensorName={nameOf(sensorId)}
-          sourceOf={(id) => sources.find((source) => source.id === id) ?? { key: "?", name: id }}
-          measuredBy={(id) => limits.find((limit) => limit.id === id)?.measured ?? id}
-        />
-      </section>
+      <Part address={address} part="positions" title="Nearest clear positions">
+        {({ sensors: [own] }) =>
+          own?.positions && <ClearPositions positions={own.positions} sensorName={nameOf(sensorId)} />
+        }
+      </Part>
+      <Part address={address} part="changes" title="Single changes, most effective first">
+        {({ changes }) => <SingleChanges changes={changes} sensorId={sensorId} nameOf={nameOf} />}
+      </Part>
+      <Part address={address} part="currents" title="Current of one circuit alone, all else unchanged">
+        {({ sensors: [own] }) =>
+          own && (
+            <AllowableCurrents
+              currents={own.currents}
+              waiting={own.waiting}
+              sensorName={nameOf(sensorId)}
+              sourceOf={(id) => sources.find((source) => source.id === id) ?? { key: "?", name: id }}
+              measuredBy={(id) => limits.find((limit) => limit.id === id)?.measured ?? id}
+            />
+          )
+        }
+      </Part>
     </div>
+  );
+}
+
+interface PartProps {
+  address: string;
+  part: ClearingPart;
+  title: string;
+  children: (answer: ClearingAnswer) => ReactNode;
+}
+
+/** Each part is asked for by itself: on a large plan one may take as long as the server gives to a request. */
+function Part({ address, part, title, children }: PartProps) {
+  const { asked, again } = useClearing(`${address}&part=${part}`);
+  return (
+    <section className={asked.state === "answered" ? undefined : "no-print"}>
+      <h5 className="keep-with-next mb-1 text-sm font-semibold">{title}</h5>
+      {asked.state === "working" && (
+        <p className="text-sm text-muted" role="status">
+          Working it out…
+        </p>
+      )}
+      {asked.state === "failed" && (
+        <div className="text-sm" role="alert">
+          <p className="field-error">{asked.message}</p>
+          <Button onClick={again}>Try again</Button>
+        </div>
+      )}
+      {asked.state === "answered" && (children(asked.answer) || <p className="text-sm">It is within.</p>)}
+    </section>
   );
 }
