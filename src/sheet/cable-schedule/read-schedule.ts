@@ -17,7 +17,7 @@ export interface ScheduleRow {
   line: number;
   /** What stood in the cells, for the preview. */
   cells: Readonly<Record<ColumnName, string>>;
-  /** Null when `problems` has any. */
+  /** Null when there are `problems`. */
   cable: Cable | null;
   problems: readonly string[];
   /** True where the plan has a circuit of that tag already; such a row is left out unless its problems are mended. */
