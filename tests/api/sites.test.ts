@@ -136,7 +136,7 @@ describe("who sees and changes a site", () => {
     await as(app, planner)("post", `/api/sites/${one.id}/plans`).send({ name: "Level 1" });
     const installer = await newMember(organisation, ["installer"], [one.id]);
     expect((await deskFor(installer)).sites).toEqual([
-      { id: one.id, name: one.name, place: one.place, plans: [] },
+      { id: one.id, name: one.name, place: one.place, timeZone: one.timeZone, plans: [] },
     ]);
     const nowhere = await newMember(organisation, ["installer"]);
     expect((await deskFor(nowhere)).sites).toEqual([]);

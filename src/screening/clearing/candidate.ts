@@ -66,12 +66,10 @@ export class MovableSensor {
 }
 
 function movedTo(prepared: PreparedPlan, index: number, position: Vector): PreparedPlan {
-  const { plan } = prepared;
-  const sensors = plan.document.sensors.with(index, {
-    ...(plan.document.sensors[index] as Sensor),
-    position: [...position],
-  });
-  return { ...prepared, plan: { ...plan, document: { ...plan.document, sensors } } };
+  const { resolved } = prepared;
+  const sensor = resolved.sensors[index] as Sensor;
+  const sensors = resolved.sensors.with(index, { ...sensor, position: [...position] });
+  return { ...prepared, resolved: { ...resolved, sensors } };
 }
 
 function judgedBy(prepared: PreparedPlan, index: number): Judged {
